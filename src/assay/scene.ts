@@ -28,6 +28,9 @@ export interface Piece {
 /** Softness of the eyepiece's rim, pixels (scale of the logistic). */
 const rim_px = 3;
 
+/** Coefficient of variation of debris sizes. */
+const debrisCv = 0.7;
+
 /** The eyepiece's circle, a little off the middle as phones are held; null when the whole picture is lit. */
 export function eyepieceCircle(settings: AssaySettings): Circle | null {
   const { width_px, height_px } = settings.picture;
@@ -85,7 +88,7 @@ export function scatterDebris(settings: AssaySettings, pad: number): Piece[] {
     const normal = normals(random);
     const x = random() * (width_px + 2 * pad) - pad;
     const y = random() * (height_px + 2 * pad) - pad;
-    const sigma = Math.max(0.8, (logNormal(size_um, 0.7, normal) * Math.sqrt(1.49) ** -1) / um_per_px);
+    const sigma = Math.max(0.8, logNormal(size_um * Math.sqrt(1 + debrisCv ** 2), debrisCv, normal) / um_per_px);
     const density = -Math.log(1 - Math.min(0.9, contrast * (0.5 + random())));
     list.push({ x_px: x, y_px: y, sigma_px: sigma, density });
     const bits = Math.floor(3 * random());
@@ -116,7 +119,14 @@ export function emptyLayer(settings: AssaySettings, pad: number): Layer {
 }
 
 /** Writes to `out` what the layer shows when its content is moved by (dx, dy) pixels, linearly interpolated. */
-export function shiftedInto(layer: Layer, dx: number, dy: number, width: number, height: number, out: Float32Array): void {
+export function shiftedInto(
+  layer: Layer,
+  dx: number,
+  dy: number,
+  width: number,
+  height: number,
+  out: Float32Array,
+): void {
   const sx = layer.pad - dx;
   const sy = layer.pad - dy;
   const ix = Math.floor(sx);

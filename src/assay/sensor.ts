@@ -39,7 +39,7 @@ export function sensor(settings: AssaySettings): Sensor {
         draw();
         const whole = level < 255 ? level | 0 : 255;
         level += (spread[whole] as number) * (normal[(state >>> 8) & (tableSize - 1)] as number) + 0.5;
-        out[k] = level <= 0 ? 0 : level >= 255 ? 255 : level;
+        out[k] = Math.min(255, Math.max(0, level));
       }
     },
   };

@@ -1,0 +1,4 @@
+export type { AssayOptions, AssaySettings, FieldStep } from "./options.ts";
+export { type Assay, planAssay } from "./plan.ts";
+export { assayPresets } from "./presets.ts";
+export type { AssayTruth, TrialTruth, TruthCell, TruthRow } from "./truth.ts";
