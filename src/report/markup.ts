@@ -26,10 +26,17 @@ function render(part: Part): string {
   return typeof part === "string" ? escapeText(part) : part.map(render).join("");
 }
 
-const entities: Readonly<Record<string, string>> = { "&": "&amp;", "<": "&lt;", ">": "&gt;", '"': "&quot;", "'": "&#39;" };
+const entities: Readonly<Record<string, string>> = {
+  "&": "&amp;",
+  "<": "&lt;",
+  ">": "&gt;",
+  '"': "&quot;",
+  "'": "&#39;",
+};
 
 /** Text for HTML and SVG, in elements and in quoted attributes. Control characters, which pages can't hold, are replaced. */
 export function escapeText(text: string): string {
-  // biome-ignore lint/suspicious/noControlCharactersInRegex: those are the ones to replace.
-  return text.replace(/[&<>"']/g, (c) => entities[c]!).replace(/[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f]/g, "\ufffd");
+  return text
+    .replace(/[&<>"']/g, (c) => entities[c]!)
+    .replace(/\p{Cc}/gu, (c) => ("\t\n\r".includes(c) ? c : "\ufffd"));
 }

@@ -23,12 +23,23 @@ export function readable(value: number, halfWidth: number | null): string {
   return withMinus(fixed(value, Math.min(6, Math.max(0, decimals))));
 }
 
-/** A figure for reading that has no interval: four significant digits. */
+/** A figure for reading that has no interval: four significant digits, without zeros at the end. */
 export function readableAlone(value: number): string {
   if (Number.isInteger(value) && Math.abs(value) < 1e9) return withMinus(String(value + 0));
   const size = Math.abs(finite(value));
-  if (size >= 1e6 || size < 1e-4) return withMinus(value.toPrecision(4));
-  return withMinus(fixed(value, Math.max(0, 3 - exponentOf(size))));
+  if (size >= 1e6 || size < 1e-4) return withMinus(trimmed(value.toPrecision(4)));
+  return withMinus(trimmed(fixed(value, Math.max(0, 3 - exponentOf(size)))));
+}
+
+/** A value with its standard uncertainty, to two digits of that: `0.4940 ± 0.0010`. The value alone when it has none. */
+export function withUncertainty(value: number, uncertainty: number): string {
+  if (uncertainty <= 0) return readableAlone(value);
+  return `${readable(value, uncertainty)} ± ${readable(uncertainty, uncertainty)}`;
+}
+
+/** A decimal number without zeros at its end: `0.8000` is `0.8`. */
+function trimmed(text: string): string {
+  return text.replace(/(\.\d*?)0+(?=e|$)/, "$1").replace(/\.(?=e|$)/, "");
 }
 
 /** Power of ten of the leading digit, read from the exact decimal writing. */
@@ -37,5 +48,5 @@ function exponentOf(value: number): number {
 }
 
 function withMinus(text: string): string {
-  return text.replace("-", "\u2212");
+  return text.replaceAll("-", "\u2212");
 }

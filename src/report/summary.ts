@@ -1,4 +1,11 @@
-import type { DriftFinding, Interval, MeasuredTrial, QualityCheck, SourceFacts, SpeedFinding } from "../quantities/index.ts";
+import type {
+  DriftFinding,
+  Interval,
+  MeasuredTrial,
+  QualityCheck,
+  SourceFacts,
+  SpeedFinding,
+} from "../quantities/index.ts";
 import { countCells } from "./cell-counts.ts";
 import { asJson, type Json, roundedJson } from "./json.ts";
 

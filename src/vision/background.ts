@@ -5,6 +5,8 @@ import type { Sample } from "./survey.ts";
 export interface Background {
   readonly level: Float32Array;
   readonly noise: Float32Array;
+  /** Spread of the pixel's own samples as a standard deviation: above `noise` where something lingers or trembles. */
+  readonly own: Float32Array;
 }
 
 /**
@@ -16,6 +18,12 @@ const ranks = { low: 12, high: 20, lower: 8, upper: 23 };
 const spreadOfNormal = 1.241;
 /** Least noise believed, grey levels: 8-bit rounding alone gives 0.29, and encoders hide more. */
 const leastNoise = 0.6;
+/** Side of the tiles over which noise is taken to be alike, pixels. */
+const tile = 40;
+/** What steadying leaves unsteadied, pixels: adds noise in proportion to the still layer's gradient. */
+const unsteady_px = 0.08;
+/** Below this level nothing is lit, and nothing is learnt about noise. */
+const darkLevel = 6;
 
 /**
  * Temporal background and noise map from samples of the clip.
@@ -38,7 +46,11 @@ export function learnBackground(
     place(s, planes[k]!);
   });
   kernels.sortStack(planes, ranks, out.level, out.spread);
-  return { level: out.level, noise: smoothNoise(out.spread, width, height) };
+  return {
+    level: out.level.slice(),
+    noise: noiseMap(out.spread, out.level, width, height),
+    own: out.spread.map((v) => v / spreadOfNormal),
+  };
 }
 
 /** Picks `n` of the items evenly; repeats some when there are fewer. */
@@ -47,17 +59,78 @@ export function chooseEvenly<T>(items: readonly T[], n: number): T[] {
 }
 
 /**
- * The spread of 32 values of one pixel is a rough figure, so it is averaged over 11 x 11 pixels; where the pixel's own
- * spread stands far above its neighbourhood's (the edge of debris that trembles) its own is kept.
+ * Noise of one frame from the spread of 32 values a pixel: the median over tiles, interpolated, since a single pixel's
+ * spread is a rough figure and is widened where cells linger. What imperfect steadying adds on steep edges of the still
+ * layer (debris, scratches) is added in squares.
  */
-function smoothNoise(spread: Float32Array, width: number, height: number): Float32Array {
-  const mean = boxMean(spread, width, height, 5);
-  for (let i = 0; i < mean.length; i++) {
-    const m = mean[i]! / spreadOfNormal;
-    const own = spread[i]! / spreadOfNormal;
-    mean[i] = Math.max(leastNoise, own > 2 * m + 1 ? own : m);
+function noiseMap(spread: Float32Array, level: Float32Array, width: number, height: number): Float32Array {
+  const columns = Math.max(1, Math.round(width / tile));
+  const rows = Math.max(1, Math.round(height / tile));
+  const grid = new Float32Array(columns * rows);
+  for (let r = 0; r < rows; r++) {
+    for (let c = 0; c < columns; c++) {
+      grid[r * columns + c] = tileMean(
+        spread,
+        level,
+        width,
+        height,
+        c / columns,
+        (c + 1) / columns,
+        r / rows,
+        (r + 1) / rows,
+      );
+    }
   }
-  return mean;
+  const out = new Float32Array(spread.length);
+  for (let y = 0; y < height; y++) {
+    const gy = clampTo(((y + 0.5) * rows) / height - 0.5, rows);
+    for (let x = 0; x < width; x++) {
+      const gx = clampTo(((x + 0.5) * columns) / width - 0.5, columns);
+      const at = gy.low * columns;
+      const below = gy.high * columns;
+      const top = grid[at + gx.low]! * (1 - gx.part) + grid[at + gx.high]! * gx.part;
+      const bottom = grid[below + gx.low]! * (1 - gx.part) + grid[below + gx.high]! * gx.part;
+      const base = top * (1 - gy.part) + bottom * gy.part;
+      const i = y * width + x;
+      const dx = x > 0 && x < width - 1 ? (level[i + 1]! - level[i - 1]!) / 2 : 0;
+      const dy = y > 0 && y < height - 1 ? (level[i + width]! - level[i - width]!) / 2 : 0;
+      const edge = Math.max(0, Math.sqrt(dx * dx + dy * dy) - base) * unsteady_px;
+      out[i] = Math.sqrt(base * base + edge * edge);
+    }
+  }
+  return out;
+}
+
+/**
+ * Mean spread of a tile without its most and least lively fifths, as a standard deviation. A mean, not a median: the
+ * spreads are whole numbers, and a median would be one too. Dark pixels outside an eyepiece's view don't count.
+ */
+function tileMean(
+  spread: Float32Array,
+  level: Float32Array,
+  width: number,
+  height: number,
+  left: number,
+  right: number,
+  top: number,
+  bottom: number,
+): number {
+  const values: number[] = [];
+  for (let y = Math.floor(top * height); y < Math.floor(bottom * height); y++) {
+    for (let x = Math.floor(left * width); x < Math.floor(right * width); x++) {
+      if (level[y * width + x]! > darkLevel) values.push(spread[y * width + x]!);
+    }
+  }
+  if (values.length < 20) return leastNoise;
+  values.sort((a, b) => a - b);
+  const kept = values.slice(Math.floor(values.length * 0.2), Math.ceil(values.length * 0.8));
+  return Math.max(leastNoise, kept.reduce((s, v) => s + v, 0) / kept.length / spreadOfNormal);
+}
+
+function clampTo(g: number, n: number): { low: number; high: number; part: number } {
+  const c = Math.min(Math.max(g, 0), n - 1);
+  const low = Math.floor(c);
+  return { low, high: Math.min(low + 1, n - 1), part: c - low };
 }
 
 /** Mean over a square of (2 radius + 1)² pixels, cut off at the edges. */

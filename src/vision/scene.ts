@@ -1,12 +1,12 @@
-import { type Background, learnBackground } from "./background.ts";
+import { type Background, boxMean, learnBackground } from "./background.ts";
 import { type ExposurePoints, exposurePoints, fitExposure } from "./exposure.ts";
 import { thresholdFor } from "./false-alarms.ts";
 import { bestKernels, stackSize } from "./kernels/index.ts";
 import { type Circle, findLitCircle, viewMask } from "./lit-view.ts";
 import type { VisionSettings } from "./settings.ts";
-import { findSpotKind, type Placed, type SpotKind } from "./spot-kind.ts";
+import { detectionSigma_px, findSpotKinds, type Placed, type SpotKind } from "./spot-kind.ts";
 import { findTexture, measureShift, type Texture } from "./steady.ts";
-import { separateStill } from "./still-spots.ts";
+import { fillLively, separateStill } from "./still-spots.ts";
 import type { Sample, Survey } from "./survey.ts";
 import { gaussianTaps, Whitener } from "./whitener.ts";
 
@@ -36,6 +36,8 @@ export interface Scene {
 const shiftNeeded_px = 0.12;
 /** Opposite-polarity maxima a frame allowed when the threshold is checked. */
 const oppositeAllowed = 3;
+/** The check raises the threshold this far at most: what stands higher in the opposite polarity isn't noise. */
+const highestRaised = 6.5;
 
 /**
  * Learns the still scene from a survey of the clip, and returns it with the whitener that finding cells uses.
@@ -52,16 +54,21 @@ export function learnScene(survey: Survey, settings: VisionSettings): { scene: S
   const kernels = bestKernels(bytes);
   const fine = new Whitener(kernels, still, inView, width, height, 1);
   const coarse = new Whitener(kernels, still, inView, width, height, 2);
-  const kind = decideKind(settings, () => findSpotKind(fine, coarse, placed));
+  const look = (level: Float32Array): SpotKind[] => {
+    for (const w of [fine, coarse]) w.setStill({ ...still, level }, inView);
+    return findSpotKinds(fine, coarse, placed);
+  };
+  const kind = decideKind(settings, still, inView, width, height, placed, look);
   const whitener = kind.sigma_px >= 2.8 ? coarse : fine;
 
-  const separated = separateStill(still, inView, width, height, kind, placed);
-  const cleaned: Background = { level: separated.level, noise: still.noise };
+  const calm = fillLively(still, inView, width, height, Math.ceil(4 * kind.sigma_px));
+  const separated = separateStill(still, calm, inView, width, height, kind, placed);
+  const cleaned: Background = { ...still, level: separated.level };
   whitener.setStill(cleaned, inView);
 
   let lit = 0;
   for (const v of inView) lit += v;
-  const sigma = kind.sigma_px / whitener.bin;
+  const sigma = detectionSigma_px(kind) / whitener.bin;
   const area = lit / (whitener.bin * whitener.bin);
   const byChance = thresholdFor(settings.falseAlarmsPerFrame, area, sigma);
   const { threshold, filteredSd } = checkThreshold(whitener, kind, placed, byChance, settings.falseAlarmsPerFrame);
@@ -85,13 +92,28 @@ export function learnScene(survey: Survey, settings: VisionSettings): { scene: S
   };
 }
 
-function decideKind(settings: VisionSettings, find: () => SpotKind): SpotKind {
-  const found = find();
-  return {
-    sigma_px: settings.spotSigma_px ?? found.sigma_px,
-    sign: settings.polarity === "dark" ? -1 : settings.polarity === "bright" ? 1 : found.sign,
-    seen: found.seen,
-  };
+/**
+ * Size and polarity of the cells. Against a temporal background alone, cells that hardly move would show as nothing or as
+ * pairs of opposite spots; so first whatever looks like a spot in the still layer but wanders is taken out of it, for either
+ * polarity, and then the cells are looked at.
+ */
+function decideKind(
+  settings: VisionSettings,
+  still: Background,
+  inView: Uint8Array,
+  width: number,
+  height: number,
+  placed: readonly Placed[],
+  look: (level: Float32Array) => SpotKind[],
+): SpotKind {
+  let level = fillLively(still, inView, width, height, 6);
+  for (const first of look(boxMean(still.level, width, height, 20))) {
+    if (first.seen) level = separateStill(still, level, inView, width, height, first, placed).level;
+  }
+  const found = look(level);
+  const sign = settings.polarity === "dark" ? -1 : settings.polarity === "bright" ? 1 : found[0]!.sign;
+  const chosen = found.find((k) => k.sign === sign)!;
+  return { ...chosen, sigma_px: settings.spotSigma_px ?? chosen.sigma_px };
 }
 
 interface StillLayer {
@@ -129,10 +151,13 @@ function learnStillLayer(samples: readonly Sample[], width: number, height: numb
       out,
     );
     const circle = roundCircle(findLitCircle(still.level, width, height));
-    const inView = viewMask(width, height, circle, circle ? Math.max(6, 0.02 * circle.radius) : 0);
+    // The rim of the view is steep: what shake leaves uncorrected there would look like cells.
+    const wobble = Math.max(...placed.map((p) => Math.max(Math.abs(p.shift.x), Math.abs(p.shift.y))));
+    const margin = circle ? Math.max(6, 0.02 * circle.radius) + Math.min(wobble, 10) : 0;
+    const inView = viewMask(width, height, circle, margin);
     const texture = chooseTexture(still, inView, circle, width, height);
     const next = placeAll(texture, exposurePoints(still.level, inView), samples, width);
-    layer = { still: { level: still.level.slice(), noise: still.noise }, circle, inView, texture, placed: next };
+    layer = { still, circle, inView, texture, placed: next };
     const moved = next.some((p, i) => differs(p, placed[i]!));
     placed = next;
     if (!moved) break;
@@ -216,7 +241,7 @@ function checkThreshold(
   byChance: number,
   rate: number,
 ): { threshold: number; filteredSd: number } {
-  const taps = gaussianTaps(kind.sigma_px / whitener.bin);
+  const taps = gaussianTaps(detectionSigma_px(kind) / whitener.bin);
   const opposite = kind.sign === 1 ? -1 : 1;
   const every = Math.max(1, Math.floor(placed.length / 12));
   const chosen = placed.filter((_, i) => i % every === 0);
@@ -240,7 +265,7 @@ function checkThreshold(
   heights.sort((a, b) => b - a);
   const allowed = Math.ceil(oppositeAllowed * rate * chosen.length);
   const needed = heights.length > allowed ? heights[allowed]! + 0.05 : 0;
-  return { threshold: Math.min(9, Math.max(byChance, needed)), filteredSd: spreads[spreads.length >> 1]! };
+  return { threshold: Math.max(byChance, Math.min(highestRaised, needed)), filteredSd: spreads[spreads.length >> 1]! };
 }
 
 function xy(i: number, width: number): { x: number; y: number } {

@@ -11,6 +11,8 @@ export interface SpotKind {
   readonly sign: 1 | -1;
   /** False when nothing stood out and the values are only the usual ones. */
   readonly seen: boolean;
+  /** Mean signal over noise of the strongest spots. */
+  readonly strength: number;
 }
 
 /** Candidate sizes, frame pixels: a factor of sqrt(2) apart. */
@@ -18,6 +20,14 @@ const candidates = [1, 1.41, 2, 2.83, 4, 5.66, 8] as const;
 /** A maximum this far above the noise is no chance in any clip. */
 const sure = 6.5;
 const looked = 6;
+
+/**
+ * Width of the filter that cells are looked for with, frame pixels. A filter three quarters the size of the spot costs 4 % of
+ * its signal over noise and tells cells apart that nearly touch; faint cells need all of it.
+ */
+export function detectionSigma_px(kind: SpotKind): number {
+  return kind.strength > 12 ? Math.max(0.8, 0.75 * kind.sigma_px) : kind.sigma_px;
+}
 
 /** A sample with its shake and exposure. */
 export interface Placed {
@@ -28,11 +38,12 @@ export interface Placed {
 
 /**
  * Finds the size and polarity of the cells: the matched filter gives the highest signal over noise at the spot's own
- * size (T. Lindeberg 1998 on scale selection, with the noise-normalised response in place of a derivative).
+ * size (T. Lindeberg 1998 on scale selection, with the noise-normalised response in place of a derivative). Returns what
+ * was found for either polarity, the likelier first.
  *
  * @param fine full-size, `coarse` half-size whitener; sizes from 2.8 px on are looked at on the coarse one.
  */
-export function findSpotKind(fine: Whitener, coarse: Whitener, samples: readonly Placed[]): SpotKind {
+export function findSpotKinds(fine: Whitener, coarse: Whitener, samples: readonly Placed[]): SpotKind[] {
   const frames = chooseEvenly(samples, Math.min(looked, samples.length));
   const responses = new Map<string, number[]>();
   for (const sign of [1, -1] as const) for (const sigma of candidates) responses.set(`${sign} ${sigma}`, []);
@@ -49,22 +60,23 @@ export function findSpotKind(fine: Whitener, coarse: Whitener, samples: readonly
     }
   }
 
-  let best: SpotKind = { sigma_px: 2, sign: -1, seen: false };
-  let most = 0;
+  // The same number of strongest maxima at every size and for either sign, so that one cell seen as two, or a halo seen
+  // as several spots round a cell, doesn't count for more: what stands out furthest wins.
+  const lists = [...responses.values()];
+  for (const list of lists) list.sort((a, b) => b - a);
+  const count = Math.max(...lists.map((l) => l.length));
+  const kinds: SpotKind[] = [];
   for (const sign of [1, -1] as const) {
-    const lists = candidates.map((sigma) => responses.get(`${sign} ${sigma}`)!.sort((a, b) => b - a));
-    const count = Math.max(...lists.map((l) => l.length));
-    if (count < 3) continue;
-    // The same number of strongest maxima at every size, so that one cell seen as two doesn't count for more.
-    const n = Math.min(400, Math.max(3, Math.round(count / 3)));
-    const scores = lists.map((l) => l.slice(0, n).reduce((s, v) => s + v, 0) / n);
+    const n = Math.min(400, Math.max(3, Math.round(count / 4)));
+    const scores = candidates.map((sigma) => {
+      const list = responses.get(`${sign} ${sigma}`)!;
+      return list.slice(0, n).reduce((s, v) => s + v, 0) / n;
+    });
     const k = scores.indexOf(Math.max(...scores));
-    const total = scores[k]! * n;
-    if (total <= most) continue;
-    most = total;
-    best = { sigma_px: vertex(scores, k), sign, seen: true };
+    const seen = responses.get(`${sign} ${candidates[k]!}`)!.length >= 3;
+    kinds.push({ sigma_px: seen ? vertex(scores, k) : 2, sign, seen, strength: scores[k]! });
   }
-  return best;
+  return kinds.sort((a, b) => b.strength - a.strength || a.sign - b.sign);
 }
 
 /** Size at the top of the parabola through the best score and its neighbours, on a logarithmic scale. */

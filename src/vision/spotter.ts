@@ -1,6 +1,7 @@
 import type { Frame, SightingsBuilder } from "../quantities/index.ts";
 import { type Exposure, fitExposure } from "./exposure.ts";
 import type { Scene } from "./scene.ts";
+import { detectionSigma_px } from "./spot-kind.ts";
 import { axesOf, measureSpot, positionErrors, type SpotShape, type Whitened } from "./spot-shape.ts";
 import { measureShift } from "./steady.ts";
 import { gaussianTaps, type Whitener } from "./whitener.ts";
@@ -30,7 +31,7 @@ export class Spotter {
     this.scene = scene;
     this.whitener = whitener;
     this.sigma = scene.kind.sigma_px / whitener.bin;
-    this.taps = gaussianTaps(this.sigma);
+    this.taps = gaussianTaps(detectionSigma_px(scene.kind) / whitener.bin);
   }
 
   /** Adds the frame's sightings to the table, in scene coordinates, and returns what else was noted. */
@@ -44,6 +45,7 @@ export class Spotter {
     const spots = this.measure(picture, filtered, found);
     const falseAlarms = this.countFalseAlarms(threshold, spots);
     for (const { spot, snr } of spots) {
+      if (!this.whole(spot)) continue;
       const axes = axesOf(spot);
       const errors = positionErrors(spot, scene.filteredSd);
       const at = Math.round(spot.y) * whitener.width + Math.round(spot.x);
@@ -142,6 +144,17 @@ export class Spotter {
       }
     }
     return first.flatMap((f) => (f.spot?.good ? [{ spot: f.spot, snr: f.snr }] : []));
+  }
+
+  /**
+   * Is the spot's middle in the picture, clear of its edge? Of a cell beyond the edge only a flank is seen, and the place
+   * of a flank is not the place of a cell.
+   */
+  private whole(spot: SpotShape): boolean {
+    const margin = 0.8 * this.scene.kind.sigma_px;
+    const x = this.whitener.toFrame(spot.x);
+    const y = this.whitener.toFrame(spot.y);
+    return x >= margin && y >= margin && x <= this.scene.width - 1 - margin && y <= this.scene.height - 1 - margin;
   }
 
   private countFalseAlarms(threshold: number, spots: readonly { spot: SpotShape }[]): number {

@@ -12,14 +12,19 @@ export interface SeparatedLayer {
 const visible = 5;
 /** More wandering than this, beyond what its localisation error explains, is motion. Pixels. */
 const leastWander_px = 0.3;
+/** Wandering less than this is left to imperfect steadying. Pixels. */
+const tremble_px = 0.08;
+/** Von Neumann ratio below which a sequence of positions is no white noise (expected 2, standard deviation about 0.25). */
+const walkRatio = 1.15;
 
 /**
  * A cell that only diffuses stays about its place and so becomes part of a temporal background, which would hide it.
  * Debris does too, and should. They are told apart by whether the spot wanders, or comes and goes, over the samples;
- * the background under one that does is filled from its surroundings.
+ * the background under one that does is filled from its surroundings, in a copy of `into`.
  */
 export function separateStill(
   still: Background,
+  into: Float32Array,
   inView: Uint8Array,
   width: number,
   height: number,
@@ -27,7 +32,7 @@ export function separateStill(
   placed: readonly Placed[],
 ): SeparatedLayer {
   const sigma = kind.sigma_px;
-  const level = still.level.slice();
+  const level = into.slice();
   const wide = boxMean(still.level, width, height, Math.ceil(5 * sigma));
   const narrow = boxMean(still.level, width, height, Math.max(1, Math.round(1.2 * sigma)));
   const found: { x_px: number; y_px: number }[] = [];
@@ -43,6 +48,39 @@ export function separateStill(
     }
   }
   return { level, still: found };
+}
+
+/**
+ * The still layer with pixels replaced by their calm surroundings where their own spread is far above the noise, and above
+ * what trembling does on a steep edge: there a cell lingers and wanders, and the median is neither the cell nor the background.
+ *
+ * @param reach radius over which calm surroundings are averaged, pixels.
+ */
+export function fillLively(
+  still: Background,
+  inView: Uint8Array,
+  width: number,
+  height: number,
+  reach: number,
+): Float32Array {
+  const { level, noise, own } = still;
+  const lively = new Uint8Array(level.length);
+  for (let y = 1; y < height - 1; y++) {
+    for (let x = 1; x < width - 1; x++) {
+      const i = y * width + x;
+      if (inView[i] === 0) continue;
+      const dx = (level[i + 1]! - level[i - 1]!) / 2;
+      const dy = (level[i + width]! - level[i - width]!) / 2;
+      const bound = (2.2 * noise[i]!) ** 2 + 0.09 * (dx * dx + dy * dy);
+      if (own[i]! * own[i]! > bound) for (const j of [i, i - 1, i + 1, i - width, i + width]) lively[j] = 1;
+    }
+  }
+  const usable = lively.map((v, i) => (v === 0 && inView[i] === 1 ? 1 : 0));
+  const calm = level.map((v, i) => (usable[i] ? v : 0));
+  const share = Float32Array.from(usable);
+  const sums = boxMean(boxMean(calm, width, height, reach), width, height, reach);
+  const weights = boxMean(boxMean(share, width, height, reach), width, height, reach);
+  return level.map((v, i) => (lively[i] && weights[i]! > 0.05 ? sums[i]! / weights[i]! : v));
 }
 
 /** Maxima of the still layer's own spots, as pixel indices, strongest first. */
@@ -123,7 +161,26 @@ function lingers(
   const wander = Math.max(robustSd(xs), robustSd(ys));
   // Coming and going: a third of the time it has lost half its contrast.
   const weak = peaks.filter((p) => p < 0.5 * strongest).length;
-  return wander > Math.sqrt(leastWander_px ** 2 + (3 * error) ** 2) || weak > peaks.length / 3;
+  if (weak > peaks.length / 3) return true;
+  if (xs.length >= 12) return wander > tremble_px && vonNeumannRatio(xs, ys) < walkRatio;
+  return wander > Math.sqrt(leastWander_px ** 2 + (3 * error) ** 2);
+}
+
+/**
+ * Mean squared step over variance (J. von Neumann 1941, Ann. Math. Stat. 12, 367), both axes together: about 2 for
+ * independent errors about one place, near 0 for a random walk. It needs no knowledge of the size of the error.
+ */
+function vonNeumannRatio(xs: readonly number[], ys: readonly number[]): number {
+  let steps = 0;
+  let spread = 0;
+  for (const v of [xs, ys]) {
+    const mean = v.reduce((s, a) => s + a, 0) / v.length;
+    for (let i = 0; i < v.length; i++) {
+      spread += (v[i]! - mean) ** 2;
+      if (i > 0) steps += (v[i]! - v[i - 1]!) ** 2;
+    }
+  }
+  return spread > 0 ? steps / spread : 2;
 }
 
 /** 1.4826 times the median absolute deviation. */

@@ -66,13 +66,17 @@ export class Whitener {
   /** Puts in another still layer. */
   setStill(still: { readonly level: Float32Array; readonly noise: Float32Array }, inView: Uint8Array): void {
     const { bin, frameWidth } = this;
-    for (let y = 0; y < this.height - 2 * pad; y++) {
-      for (let x = 0; x < this.width - 2 * pad; x++) {
-        const to = (y + pad) * this.width + x + pad;
+    for (let cy = 0; cy < this.height; cy++) {
+      for (let cx = 0; cx < this.width; cx++) {
+        // The margin repeats the edge, so that moving the background draws nothing foreign in; it is never in view.
+        const x = Math.min(Math.max(cx - pad, 0), this.width - 2 * pad - 1);
+        const y = Math.min(Math.max(cy - pad, 0), this.height - 2 * pad - 1);
+        const outside = x !== cx - pad || y !== cy - pad;
+        const to = cy * this.width + cx;
         const from = y * bin * frameWidth + x * bin;
         if (bin === 1) {
           this.background[to] = still.level[from]!;
-          this.inverse[to] = inView[from] ? 1 / still.noise[from]! : 0;
+          this.inverse[to] = inView[from] && !outside ? 1 / still.noise[from]! : 0;
         } else {
           const four = [from, from + 1, from + frameWidth, from + frameWidth + 1];
           let level = 0;
@@ -84,7 +88,7 @@ export class Whitener {
             seen = Math.min(seen, inView[i]!);
           }
           this.background[to] = level;
-          this.inverse[to] = seen ? 2 / noise : 0;
+          this.inverse[to] = seen && !outside ? 2 / noise : 0;
         }
       }
     }

@@ -8,10 +8,10 @@ export interface SwarmDot {
 /**
  * Puts dots of one radius beside each other so that none overlaps another and each keeps its place along the axis.
  *
- * Dots go in order of `along`, each as near to the middle as is free. The widest offset grows with crowding; see
- * {@link fittingSwarm} for a swarm that has to stay inside a band.
+ * Dots go in order of `along`, each as near to the middle as is free. Null as soon as one lies further out than
+ * `room`; {@link fittingSwarm} finds dots that fit.
  */
-export function swarm(along: readonly number[], radius: number): SwarmDot[] {
+export function swarm(along: readonly number[], radius: number, room = Number.POSITIVE_INFINITY): SwarmDot[] | null {
   const order = along.map((_, i) => i).sort((a, b) => along[a]! - along[b]! || a - b);
   const placed: SwarmDot[] = [];
   let firstNear = 0;
@@ -19,7 +19,9 @@ export function swarm(along: readonly number[], radius: number): SwarmDot[] {
     const x = along[index]!;
     while (firstNear < placed.length && x - placed[firstNear]!.along >= 2 * radius) firstNear++;
     const near = placed.slice(firstNear);
-    placed.push({ index, along: x, aside: nearestFree(x, near, radius) });
+    const aside = nearestFree(x, near, radius);
+    if (Math.abs(aside) + radius > room) return null;
+    placed.push({ index, along: x, aside });
   }
   return placed;
 }
@@ -31,12 +33,12 @@ export function fittingSwarm(
   room: number,
 ): { radius: number; dots: SwarmDot[] } {
   for (const radius of radii) {
-    const dots = swarm(along, radius);
-    if (dots.every((dot) => Math.abs(dot.aside) + radius <= room)) return { radius, dots };
+    const dots = swarm(along, radius, room);
+    if (dots) return { radius, dots };
   }
   const radius = radii[radii.length - 1]!;
   const edge = room - radius;
-  const dots = swarm(along, radius).map((dot) => ({ ...dot, aside: Math.max(-edge, Math.min(edge, dot.aside)) }));
+  const dots = swarm(along, radius)!.map((dot) => ({ ...dot, aside: Math.max(-edge, Math.min(edge, dot.aside)) }));
   return { radius, dots };
 }
 

@@ -56,7 +56,7 @@ function onePath({ paths, cells }: MeasuredTrial, p: number, zoom: number): Mark
   for (let row = first + 1; row < end; row++) {
     const nextX = (paths.x_px[row]! + 0.5) * zoom;
     const nextY = (paths.y_px[row]! + 0.5) * zoom;
-    if (row < end - 1 && Math.hypot(nextX - x, nextY - y) < minStep) continue;
+    if (row < end - 1 && (nextX - x) ** 2 + (nextY - y) ** 2 < minStep ** 2) continue;
     x = nextX;
     y = nextY;
     line += `L${tenth(x)} ${tenth(y)}`;

@@ -1,0 +1,20 @@
+/** A recording as bytes that are fetched piece by piece, so that its length never matters. */
+export interface Bytes {
+  /** Length in bytes. */
+  readonly size: number;
+  /** Reads `length` bytes from `at` on; fewer when the recording ends earlier. */
+  read(at: number, length: number): Promise<Uint8Array>;
+}
+
+/** Bytes held in memory. */
+export function bytesOf(array: Uint8Array): Bytes {
+  return { size: array.length, read: async (at, length) => array.subarray(at, at + length) };
+}
+
+/** Bytes of a picked file. */
+export function bytesOfBlob(blob: Blob): Bytes {
+  return {
+    size: blob.size,
+    read: async (at, length) => new Uint8Array(await blob.slice(at, at + length).arrayBuffer()),
+  };
+}

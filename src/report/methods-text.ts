@@ -1,0 +1,86 @@
+import type { MeasuredTrial } from "../quantities/index.ts";
+import { readableAlone, withUncertainty } from "./numbers.ts";
+
+/** A published method: short form as cited in the text, and the full reference. */
+export interface Reference {
+  readonly short: string;
+  readonly full: string;
+}
+
+/** Paragraphs for a methods section, plain text, and the publications they cite. */
+export interface MethodsText {
+  readonly paragraphs: readonly string[];
+  readonly references: readonly Reference[];
+}
+
+const adler: Reference = {
+  short: "Adler 1981",
+  full: "Adler RJ. The Geometry of Random Fields. Wiley, Chichester, 1981.",
+};
+const bernstein: Reference = {
+  short: "Bernstein and Jarvis 2002",
+  full: "Bernstein GM, Jarvis M. Shapes and shears, stars and smears: optimal measurements for weak lensing. Astron. J. 123, 583–618 (2002).",
+};
+const jonker: Reference = {
+  short: "Jonker and Volgenant 1987",
+  full: "Jonker R, Volgenant A. A shortest augmenting path algorithm for dense and sparse linear assignment problems. Computing 38, 325–340 (1987).",
+};
+const kalman: Reference = {
+  short: "Kalman 1960",
+  full: "Kalman RE. A new approach to linear filtering and prediction problems. J. Basic Eng. 82, 35–45 (1960).",
+};
+const rousseeuw: Reference = {
+  short: "Rousseeuw and Croux 1993",
+  full: "Rousseeuw PJ, Croux C. Alternatives to the median absolute deviation. J. Am. Stat. Assoc. 88, 1273–1283 (1993).",
+};
+const student: Reference = {
+  short: "Student 1908",
+  full: "Student. The probable error of a mean. Biometrika 6, 1–25 (1908).",
+};
+const vestergaard: Reference = {
+  short: "Vestergaard et al. 2014",
+  full: "Vestergaard CL, Blainey PC, Flyvbjerg H. Optimal estimation of diffusion coefficients from single-particle trajectories. Phys. Rev. E 89, 022726 (2014).",
+};
+const wilson: Reference = {
+  short: "Wilson 1927",
+  full: "Wilson EB. Probable inference, the law of succession, and statistical inference. J. Am. Stat. Assoc. 22, 209–212 (1927).",
+};
+
+/** A methods section ready to paste, for what was done to this trial. */
+export function methodsText(measured: MeasuredTrial): MethodsText {
+  const finding =
+    "In every frame the still background (temporal median) was subtracted and the residual divided by the local noise " +
+    `(scaled median absolute deviation over time; ${rousseeuw.short}). The result was smoothed with a Gaussian matched ` +
+    "to the size of the cells. Its threshold was set so that noise alone would rarely pass anywhere in a frame, from " +
+    `the expected Euler characteristic of a Gaussian random field (${adler.short}). Cells were located with sub-pixel ` +
+    `accuracy by an adaptive-moment weighted centroid (${bernstein.short}).`;
+  const following =
+    `Sightings were joined into paths with a Kalman filter (${kalman.short}) that predicts each position over the ` +
+    "measured time between frames, and a globally optimal assignment of sightings to predictions " +
+    `(${jonker.short}).`;
+  const judging =
+    "A cell was called motile when its displacement was larger than diffusion and flow explain (displacement test at " +
+    "a fixed false-positive rate). Localisation noise was estimated from the covariance of successive displacements " +
+    `(${vestergaard.short}) and its contribution to the speed removed. Speeds are in the image plane.` +
+    (measured.drift ? " The common flow of the fluid was measured and subtracted." : "");
+  const counting =
+    "The mean speed is over motile cells followed for at least 0.5 s, each cell once, with a 95 % interval from " +
+    `Student's t distribution over cells (${student.short}). The motile share has a Wilson 95 % interval ` +
+    `(${wilson.short}).`;
+  return {
+    paragraphs: [`${recordingText(measured)} ${finding}`, `${following} ${judging}`, counting],
+    references: [adler, bernstein, jonker, kalman, rousseeuw, student, vestergaard, wilson],
+  };
+}
+
+function recordingText({ source, scale, tool }: MeasuredTrial): string {
+  const rate = source.fps_median === null ? "" : `, median rate ${readableAlone(source.fps_median)} frames per second`;
+  const clock = source.timeFactor === 1 ? "" : `, time rescaled by ${readableAlone(source.timeFactor)}`;
+  const sized = scale
+    ? `The scale was ${withUncertainty(scale.um_per_px, scale.uncertainty_um_per_px)} µm per pixel.`
+    : "No scale was given; lengths are in pixels.";
+  return (
+    `The recording (${source.width_px} × ${source.height_px} pixels, ${source.frames} frames${rate}${clock}) was ` +
+    `measured with ${tool.name} ${tool.version}. ${sized} Times are capture times from the recording's own time stamps.`
+  );
+}
