@@ -4,12 +4,50 @@ import type { AssayOptions } from "./options.ts";
 export interface Preset {
   readonly about: string;
   readonly options: AssayOptions;
+  /** What the trial is to be called; what is left out is named after the preset. */
+  readonly labels?: TrialLabels;
+  /** Quality of the encoded recording, where the usual one won't do: constant rate factor and speed preset. */
+  readonly encoding?: { readonly crf: number; readonly preset: string };
+}
+
+/** What a trial is called. */
+export interface TrialLabels {
+  readonly trial?: string;
+  readonly strain?: string;
+  readonly culture?: string;
+  readonly condition?: string;
 }
 
 const eyepiece = { eyepiece: 0.94 };
 
 /** Assays by name, each for one thing that makes footage hard. */
 export const assayPresets: Readonly<Record<string, Preset>> = {
+  demo: {
+    about: "the bundled demo: a phone at the eyepiece, a field that reverses twice",
+    labels: { trial: "D01", strain: "QK-11", culture: "C2", condition: "22 C, fresh medium" },
+    encoding: { crf: 24, preset: "slow" },
+    options: {
+      seed: 20260412,
+      picture: { width_px: 960, height_px: 720, um_per_px: 0.432 },
+      time: { seconds: 12, fps: 30 },
+      sample: { depth_um: 28, flow_um_s: [1.6, -0.9] },
+      swimmers: { cells: 46, speed_um_s: 38, speedCv: 0.28, moment_A_m2: 4.2e-16 },
+      dead: { cells: 9 },
+      stuck: { cells: 4 },
+      debris: { pieces: 16, size_um: 1.6, contrast: 0.28 },
+      field: {
+        steps: [
+          { t_s: 0, magnitude_mT: 0.4, angle_deg: 0 },
+          { t_s: 4, magnitude_mT: 0.4, angle_deg: 180 },
+          { t_s: 8, magnitude_mT: 0.4, angle_deg: 0 },
+        ],
+        ambient_mT: [0.012, 0.018],
+      },
+      light: { level: 172, vignette: 0.3, eyepiece: 0.96 },
+      sensor: { noise: 1.8, gainDrift: 0.015 },
+      phone: { shake_px: 0.35 },
+    },
+  },
   plain: { about: "dark cells in good focus on an even field", options: {} },
   dense: {
     about: "many cells that cross and touch",

@@ -17,12 +17,20 @@ export interface Circle {
   readonly radius: number;
 }
 
-/** One piece of debris: scene pixels, y down. */
-export interface Piece {
+/** One round grain of debris: scene pixels, y down. */
+interface Grain {
   readonly x_px: number;
   readonly y_px: number;
   readonly sigma_px: number;
   readonly density: number;
+}
+
+/** One piece of debris, made of grains: scene pixels, y down. */
+export interface Piece {
+  readonly x_px: number;
+  readonly y_px: number;
+  readonly sigma_px: number;
+  readonly grains: readonly Grain[];
 }
 
 /** Softness of the eyepiece's rim, pixels (scale of the logistic). */
@@ -78,37 +86,36 @@ export function lightLayer(settings: AssaySettings, circle: Circle | null, pad: 
   return layer;
 }
 
-/** Scatters debris over the scene: each piece one of a spread of sizes, with a bit or two beside it. */
+/** Scatters debris over the scene: small pieces are one grain, larger ones an irregular clump of grains. */
 export function scatterDebris(settings: AssaySettings, pad: number): Piece[] {
   const { pieces, size_um, contrast } = settings.debris;
   const { width_px, height_px, um_per_px } = settings.picture;
-  const list: Piece[] = [];
-  for (let p = 0; p < pieces; p++) {
+  return Array.from({ length: pieces }, (_, p) => {
     const random = stream(settings.seed, "debris", p);
     const normal = normals(random);
-    const x = random() * (width_px + 2 * pad) - pad;
-    const y = random() * (height_px + 2 * pad) - pad;
-    const sigma = Math.max(0.8, logNormal(size_um * Math.sqrt(1 + debrisCv ** 2), debrisCv, normal) / um_per_px);
+    const x_px = random() * (width_px + 2 * pad) - pad;
+    const y_px = random() * (height_px + 2 * pad) - pad;
+    const mean_um = size_um * Math.sqrt(1 + debrisCv ** 2);
+    const sigma_px = Math.max(0.8, logNormal(mean_um, debrisCv, normal) / um_per_px);
     const density = -Math.log(1 - Math.min(0.9, contrast * (0.5 + random())));
-    list.push({ x_px: x, y_px: y, sigma_px: sigma, density });
-    const bits = Math.floor(3 * random());
-    for (let b = 0; b < bits; b++) {
-      list.push({
-        x_px: x + 1.6 * sigma * normal(),
-        y_px: y + 1.6 * sigma * normal(),
-        sigma_px: Math.max(0.8, sigma * (0.3 + 0.5 * random())),
-        density: density * (0.4 + 0.5 * random()),
-      });
-    }
-  }
-  return list;
+    const count = Math.min(14, Math.max(1, Math.round(1.5 * sigma_px)));
+    const grains = Array.from({ length: count }, (_, g) => ({
+      x_px: x_px + (g === 0 ? 0 : 0.8 * sigma_px * normal()),
+      y_px: y_px + (g === 0 ? 0 : 0.5 * sigma_px * normal()),
+      sigma_px: count === 1 ? sigma_px : Math.max(0.8, sigma_px * (0.2 + 0.35 * random())),
+      density: count === 1 ? density : density * (0.4 + 0.5 * random()),
+    }));
+    return { x_px, y_px, sigma_px, grains };
+  });
 }
 
 /** Adds debris to a layer of optical density. */
 export function drawDebris(layer: Layer, pieces: readonly Piece[]): void {
-  for (const { x_px, y_px, sigma_px, density } of pieces) {
-    const spot = { peak: density, cxx: sigma_px ** 2, cxy: 0, cyy: sigma_px ** 2 };
-    addGaussian(layer.values, layer.width, layer.height, x_px + layer.pad, y_px + layer.pad, spot, density);
+  for (const { grains } of pieces) {
+    for (const { x_px, y_px, sigma_px, density } of grains) {
+      const spot = { peak: density, cxx: sigma_px ** 2, cxy: 0, cyy: sigma_px ** 2 };
+      addGaussian(layer.values, layer.width, layer.height, x_px + layer.pad, y_px + layer.pad, spot, density);
+    }
   }
 }
 

@@ -61,7 +61,7 @@ export interface TrialTruth {
 }
 
 export interface AssayTruth {
-  /** Every row of every cell whose centre lies in the picture, by cell, then frame. Debris has its rows too. */
+  /** A row for every cell and frame in which its centre lies in the lit view, by cell, then frame. Debris has its rows too. */
   readonly rows: readonly TruthRow[];
   readonly cells: readonly TruthCell[];
   readonly trial: TrialTruth;
@@ -113,14 +113,13 @@ function rowsOfVisit(
   motion: Motion,
   camera: Camera,
 ): TruthRow[] {
-  const { width_px, height_px } = settings.picture;
   const speed = motion.body.speed_um_s;
   const rows: TruthRow[] = [];
   for (let frame = 0; frame < capture.frames; frame++) {
     const shown = capture.shows[frame] as number;
     if (motion.visit[shown] !== visit) continue;
     const { x_px, y_px, signalToNoise, inView } = camera.look(motion, frame);
-    if (x_px < 0 || y_px < 0 || x_px > width_px - 1 || y_px > height_px - 1) continue;
+    if (!inView) continue;
     rows.push({
       cell,
       kind: motion.body.kind,
@@ -133,7 +132,7 @@ function rowsOfVisit(
       vx_um_s: speed * (motion.nx[shown] as number),
       vy_um_s: speed * (motion.ny[shown] as number),
       signalToNoise,
-      visible: inView && signalToNoise >= settings.visibleAt,
+      visible: signalToNoise >= settings.visibleAt,
     });
   }
   return rows;

@@ -110,9 +110,11 @@ export async function readIsoMovie(bytes: Bytes): Promise<IsoMovie | null> {
   return null;
 }
 
-/** Whether the last box of an ISO base media file claims more bytes than the file has. */
+/** Boxes whose loss is a loss of recording; makers append things of their own after them. */
+const substance = new Set(["moov", "moof", "mdat"]);
+
+/** Whether an ISO base media file ends before a box of media or index does. */
 export async function isoCutShort(bytes: Bytes): Promise<boolean> {
-  let whole = true;
-  for await (const box of boxes(bytes, 0, bytes.size)) whole = box.whole;
-  return !whole;
+  for await (const box of boxes(bytes, 0, bytes.size)) if (!box.whole && substance.has(box.type)) return true;
+  return false;
 }

@@ -16,6 +16,8 @@ import { pixelsNotSquare, severalTracks, slowMotionMarks } from "../warnings.ts"
 export interface DescribedTrack {
   readonly recording: Recording;
   readonly track: InputVideoTrack;
+  /** Whether the demuxing library knows the codec; what it doesn't is for ffmpeg. */
+  readonly decodable: boolean;
   /** Turns a sample's timestamp (seconds) into ticks of the track's own clock, before any edit list. */
   ticksOf(timestamp_s: number): number;
 }
@@ -64,6 +66,7 @@ export async function describeTrack(
   const head = await bytes.read(0, 512);
   return {
     track,
+    decodable: (await track.getCodec()) !== null,
     ticksOf,
     recording: {
       name,

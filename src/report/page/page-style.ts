@@ -58,7 +58,7 @@ dl { display: grid; grid-template-columns: minmax(120px, max-content) minmax(0, 
 dt { color: var(--quiet); } dd { margin: 0; overflow-wrap: anywhere; font-variant-numeric: tabular-nums lining-nums; }
 .hash { font: 13px ui-monospace, "Cascadia Mono", "DejaVu Sans Mono", monospace; }
 summary { cursor: pointer; color: var(--quiet); width: max-content; }
-summary:focus-visible { outline: 2px solid var(--cell); outline-offset: 3px; }
+summary:focus-visible, .scroll:focus-visible { outline: 2px solid var(--cell); outline-offset: 3px; }
 pre { margin: 10px 0 0; padding: 14px 16px; overflow-x: auto; border-radius: 4px; background: var(--tint); font: 12.5px/1.5 ui-monospace, "Cascadia Mono", "DejaVu Sans Mono", monospace; white-space: pre-wrap; overflow-wrap: anywhere; }
 .references { margin: 16px 0 0; padding: 0; list-style: none; font-size: 14px; color: var(--quiet); }
 .references li { padding-left: 1.6em; text-indent: -1.6em; margin-bottom: 4px; }
@@ -67,6 +67,7 @@ pre { margin: 10px 0 0; padding: 14px 16px; overflow-x: auto; border-radius: 4px
 @media (max-width: 640px) {
   body { padding: 24px 16px 48px; }
   .verdict { font-size: 24px; }
+  .scroll table { min-width: 580px; }
   dl { grid-template-columns: minmax(0, 1fr); gap: 0; } dd { margin-bottom: 8px; }
 }
 @page { margin: 16mm 15mm 17mm; }

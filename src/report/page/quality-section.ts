@@ -7,7 +7,7 @@ import { asWords } from "./words.ts";
 /** What was checked of the footage: figure, verdict as shape and word, and what to do when filming again. */
 export function qualitySection({ quality }: MeasuredTrial): Markup {
   if (quality.length === 0) return markup``;
-  return markup`<section><h2>Footage</h2><div class="scroll"><table><thead><tr><th scope="col">Check</th><th scope="col" class="number">Figure</th><th scope="col">Verdict</th><th scope="col">What it means</th></tr></thead><tbody>${quality.map(
+  return markup`<section><h2>Footage</h2><div class="scroll" tabindex="0" role="region" aria-label="Footage checks"><table><thead><tr><th scope="col">Check</th><th scope="col" class="number">Figure</th><th scope="col">Verdict</th><th scope="col">What it means</th></tr></thead><tbody>${quality.map(
     (check) =>
       markup`<tr><th scope="row">${asWords(check.check)}</th><td class="number">${withUnit(check.figure, check.unit)}</td><td>${mark(check.verdict)}</td><td>${check.advice}</td></tr>`,
   )}</tbody></table></div></section>`;

@@ -1,0 +1,63 @@
+import { Input, MATROSKA, MP4, QTFF, type Source, WEBM } from "mediabunny";
+import { InputError } from "../quantities/index.ts";
+import type { Bytes } from "./bytes.ts";
+import { sniffContainer } from "./container/sniff.ts";
+import type { Decoder } from "./decoder.ts";
+import type { Footage, FootageSettings } from "./footage.ts";
+import { type DecoderMaker, openRecording } from "./open.ts";
+import type { Recording } from "./recording.ts";
+import { emptyFile, notAVideo } from "./refusals.ts";
+import { type DescribedTrack, describeTrack } from "./samples/describe.ts";
+import type { SampleSource } from "./samples/samples-decoder.ts";
+import { describeByProbe, type Probe } from "./wasm/describe-by-probe.ts";
+
+/** A file and the ways of decoding it where we run (Node or a browser's worker). */
+export interface OpenableSource {
+  readonly name: string;
+  readonly bytes: Bytes;
+  /** The same file for the demuxing library. */
+  readonly source: Source;
+  /** The fast decoder of this place; null when it isn't there. */
+  readonly fast: (source: SampleSource) => Promise<Decoder | null>;
+  /** Asks ffmpeg in WebAssembly what the file holds; null when it finds nothing. */
+  readonly probe: () => Promise<Probe | null>;
+  readonly wasm: () => Promise<Decoder>;
+}
+
+/** Tells what a file is by its content, describes it, and opens it with the best decoder that the settings allow. */
+export async function openSource(file: OpenableSource, settings: FootageSettings): Promise<Footage> {
+  const { name, bytes } = file;
+  if (bytes.size === 0) throw emptyFile(name);
+  const head = await bytes.read(0, 512);
+  const kind = sniffContainer(head);
+  if (kind === null) throw notAVideo(name);
+
+  const input = new Input({ formats: [MP4, QTFF, MATROSKA, WEBM], source: file.source });
+  const close = () => input.dispose();
+  try {
+    const described = kind === "iso-bmff" || kind === "matroska" ? await describe(input, file) : null;
+    const recording = described?.recording ?? (await describeByProbe(file.probe, bytes, name, kind, head));
+    return await openRecording(recording, makers(file, described, settings), settings, close);
+  } catch (error) {
+    close();
+    throw error;
+  }
+
+  /** Through the demuxing library; what it can't make sense of is left to ffmpeg. */
+  async function describe(of: Input, { name, bytes }: OpenableSource): Promise<DescribedTrack | null> {
+    try {
+      return await describeTrack(of, bytes, name, kind!);
+    } catch (error) {
+      if (error instanceof InputError) throw error;
+      return null;
+    }
+  }
+}
+
+function makers(file: OpenableSource, described: DescribedTrack | null, settings: FootageSettings): DecoderMaker[] {
+  const wanted = settings.decoder ?? "auto";
+  const ways: DecoderMaker[] = [];
+  if (wanted !== "wasm" && described?.decodable) ways.push(() => file.fast(described));
+  if (wanted !== "native") ways.push(file.wasm);
+  return ways;
+}
