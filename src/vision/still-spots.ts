@@ -14,6 +14,8 @@ const visible = 5;
 const leastWander_px = 0.3;
 /** Wandering less than this is left to imperfect steadying. Pixels. */
 const tremble_px = 0.08;
+/** Variance over what noise explains, averaged over a spot, below which nothing moves there. */
+const calmRatio = 1.5;
 /** Von Neumann ratio below which a sequence of positions is no white noise (expected 2, standard deviation about 0.25). */
 const walkRatio = 1.15;
 
@@ -41,7 +43,7 @@ export function separateStill(
     const x = i % width;
     const y = Math.floor(i / width);
     const base = ringMedian(still.level, width, height, x, y, 3.5 * sigma, 5.5 * sigma);
-    if (lingers(placed, base, still.noise[i]!, width, height, kind, x, y)) {
+    if (!calm(still, width, height, x, y, 2 * sigma) && lingers(placed, base, still.noise[i]!, width, height, kind, x, y)) {
       fill(level, width, height, x, y, 3.2 * sigma, base);
     } else {
       found.push({ x_px: x, y_px: y });
@@ -115,6 +117,25 @@ function spotsOf(
     }
   }
   return out.sort((a, b) => strength(b) - strength(a) || a - b);
+}
+
+/** Do the pixels about (x, y) spread no more over the samples than noise, and trembling on their slopes, explain? */
+function calm(still: Background, width: number, height: number, x: number, y: number, radius: number): boolean {
+  const { level, noise, own } = still;
+  const r = Math.ceil(radius);
+  let spread = 0;
+  let explained = 0;
+  for (let j = Math.max(1, y - r); j <= Math.min(height - 2, y + r); j++) {
+    for (let i = Math.max(1, x - r); i <= Math.min(width - 2, x + r); i++) {
+      if ((i - x) ** 2 + (j - y) ** 2 > radius * radius) continue;
+      const k = j * width + i;
+      const dx = (level[k + 1]! - level[k - 1]!) / 2;
+      const dy = (level[k + width]! - level[k - width]!) / 2;
+      spread += own[k]! * own[k]!;
+      explained += noise[k]! * noise[k]! + tremble_px * tremble_px * (dx * dx + dy * dy);
+    }
+  }
+  return spread < calmRatio * explained;
 }
 
 /** Does the spot at (x, y) move, or come and go, over the samples? */

@@ -1,0 +1,131 @@
+import {
+  type Beginning,
+  type Context,
+  type Ending,
+  type Paths,
+  type Sightings,
+  throwIfStopped,
+} from "../quantities/index.ts";
+import { Follower } from "./follow.ts";
+import { FrameIndex } from "./frame-index.ts";
+import { joinPieces } from "./join.ts";
+import { firstGuess, learnMotion } from "./learn-motion.ts";
+import type { MotionModel } from "./motion-model.ts";
+import type { TrackingSettings } from "./settings.ts";
+
+/** Where cells can be seen, scene pixels. */
+export interface TrackingView {
+  readonly width: number;
+  readonly height: number;
+  readonly circle: { readonly x: number; readonly y: number; readonly radius: number } | null;
+  readonly area_px2: number;
+}
+
+/** Paths, and what was learnt about how sightings follow one another. */
+export interface Tracked {
+  readonly paths: Paths;
+  readonly motion: MotionModel;
+  /** Median distance from a sighting to its nearest neighbour in the same frame; null when no frame has two. */
+  readonly neighbourDistance_px: number | null;
+}
+
+/**
+ * Puts sightings together to paths, one a cell.
+ *
+ * @param times_s capture time of every frame, rising
+ * @throws Stopped when the context's signal is raised
+ */
+export function trackCells(
+  sightings: Sightings,
+  times_s: Float64Array,
+  view: TrackingView,
+  settings: TrackingSettings,
+  context: Context,
+): Tracked {
+  const frames = times_s.length;
+  const index = new FrameIndex(sightings, frames);
+  const interval_s = medianInterval_s(times_s);
+  const guess = firstGuess(index, sightings.count / Math.max(1, frames), view.area_px2, interval_s);
+  const motion = learnMotion(sightings, index, times_s, guess, settings, interval_s, view.area_px2);
+  const follower = new Follower(sightings, index, motion, settings, interval_s);
+  for (let f = 0; f < frames; f++) {
+    if (f % 100 === 0) {
+      throwIfStopped(context.signal);
+      context.progress?.({ stage: "following cells", done: f, total: frames });
+    }
+    follower.frame(f, times_s[f] as number);
+  }
+  const pieces = follower.pieces.map((p) => p.rows);
+  const joined = joinPieces(pieces, sightings, times_s, motion, settings);
+  const kept = joined.filter((rows) => rows.length >= settings.fewestSightings);
+  return {
+    paths: tableOf(kept, sightings, times_s, view, motion),
+    motion,
+    neighbourDistance_px: index.medianNeighbourDistance(),
+  };
+}
+
+function tableOf(
+  pieces: readonly (readonly number[])[],
+  s: Sightings,
+  times_s: Float64Array,
+  view: TrackingView,
+  motion: MotionModel,
+): Paths {
+  const rows = Uint32Array.from(pieces.flat());
+  const start = new Uint32Array(pieces.length + 1);
+  pieces.forEach((p, i) => {
+    start[i + 1] = (start[i] as number) + p.length;
+  });
+  const frame = Uint32Array.from(rows, (r) => s.frame[r] as number);
+  const lastFrame = times_s.length - 1;
+  const nearEdge = (row: number, from: number) => {
+    const t = (r: number) => times_s[s.frame[r] as number] as number;
+    const dt = Math.abs(t(row) - t(from));
+    const dx = (s.x_px[row] as number) - (s.x_px[from] as number);
+    const dy = (s.y_px[row] as number) - (s.y_px[from] as number);
+    const speed = dt > 0 ? Math.sqrt(dx * dx + dy * dy) / dt : motion.speedSd_px_s;
+    return toEdge(view, s.x_px[row] as number, s.y_px[row] as number) < 6 + 2 * speed * medianInterval_s(times_s);
+  };
+  const began = pieces.map((p): Beginning => {
+    if (s.frame[p[0] as number] === 0) return "first frame";
+    return nearEdge(p[0] as number, p[Math.min(3, p.length - 1)] as number) ? "entered view" : "appeared";
+  });
+  const ended = pieces.map((p): Ending => {
+    const last = p.at(-1) as number;
+    if (s.frame[last] === lastFrame) return "last frame";
+    return nearEdge(last, p.at(-Math.min(4, p.length)) as number) ? "left view" : "lost";
+  });
+  return {
+    count: pieces.length,
+    start,
+    frame,
+    t_s: Float64Array.from(frame, (f) => times_s[f] as number),
+    x_px: Float64Array.from(rows, (r) => s.x_px[r] as number),
+    y_px: Float64Array.from(rows, (r) => s.y_px[r] as number),
+    seX_px: Float32Array.from(rows, (r) => s.seX_px[r] as number),
+    seY_px: Float32Array.from(rows, (r) => s.seY_px[r] as number),
+    sighting: rows,
+    began,
+    ended,
+  };
+}
+
+/** Distance from a place in view to where the view ends, pixels. */
+function toEdge(view: TrackingView, x: number, y: number): number {
+  const frame = Math.min(x, y, view.width - 1 - x, view.height - 1 - y);
+  if (!view.circle) return frame;
+  const { circle } = view;
+  return Math.min(frame, circle.radius - Math.sqrt((x - circle.x) ** 2 + (y - circle.y) ** 2));
+}
+
+/** Median time between frames; 1 for a single frame. */
+function medianInterval_s(times_s: Float64Array): number {
+  if (times_s.length < 2) return 1;
+  const gaps = Float64Array.from(
+    { length: times_s.length - 1 },
+    (_, i) => (times_s[i + 1] as number) - (times_s[i] as number),
+  );
+  gaps.sort();
+  return gaps[gaps.length >> 1] as number;
+}
