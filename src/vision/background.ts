@@ -22,6 +22,8 @@ const leastNoise = 0.6;
 const tile = 40;
 /** What steadying leaves unsteadied, pixels: adds noise in proportion to the still layer's gradient. */
 const unsteady_px = 0.08;
+/** Where the still layer changes by more than this from pixel to pixel, grey levels, noise isn't read off. */
+const steepSlope = 4;
 /** Below this level nothing is lit, and nothing is learnt about noise. */
 const darkLevel = 6;
 
@@ -103,7 +105,8 @@ function noiseMap(spread: Float32Array, level: Float32Array, width: number, heig
 
 /**
  * Mean spread of a tile without its most and least lively fifths, as a standard deviation. A mean, not a median: the
- * spreads are whole numbers, and a median would be one too. Dark pixels outside an eyepiece's view don't count.
+ * spreads are whole numbers, and a median would be one too. Pixels much darker than the tile's bright ones have less noise
+ * and don't count, nor do steep ones, where whatever trembles adds to it: at the rim of an eyepiece's view there are many.
  */
 function tileMean(
   spread: Float32Array,
@@ -115,16 +118,28 @@ function tileMean(
   top: number,
   bottom: number,
 ): number {
-  const values: number[] = [];
+  const lit: number[] = [];
   for (let y = Math.floor(top * height); y < Math.floor(bottom * height); y++) {
     for (let x = Math.floor(left * width); x < Math.floor(right * width); x++) {
-      if (level[y * width + x]! > darkLevel) values.push(spread[y * width + x]!);
+      if (level[y * width + x]! > darkLevel) lit.push(y * width + x);
     }
   }
-  if (values.length < 20) return leastNoise;
+  if (lit.length < 20) return leastNoise;
+  const levels = Float32Array.from(lit, (i) => level[i]!).sort();
+  const dim = 0.7 * levels[Math.floor(0.9 * levels.length)]!;
+  const even = lit.filter((i) => level[i]! > dim && slope(level, width, i) < steepSlope);
+  const values = (even.length < 20 ? lit : even).map((i) => spread[i]!);
   values.sort((a, b) => a - b);
   const kept = values.slice(Math.floor(values.length * 0.2), Math.ceil(values.length * 0.8));
   return Math.max(leastNoise, kept.reduce((s, v) => s + v, 0) / kept.length / spreadOfNormal);
+}
+
+/** Change of level from one pixel to the next, the greater of both directions. Edges of the picture count as flat. */
+function slope(level: Float32Array, width: number, i: number): number {
+  const x = i % width;
+  const across = x > 0 && x < width - 1 ? Math.abs(level[i + 1]! - level[i - 1]!) / 2 : 0;
+  const down = i >= width && i + width < level.length ? Math.abs(level[i + width]! - level[i - width]!) / 2 : 0;
+  return Math.max(across, down);
 }
 
 function clampTo(g: number, n: number): { low: number; high: number; part: number } {

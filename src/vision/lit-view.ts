@@ -140,3 +140,39 @@ export function viewMask(width: number, height: number, circle: Circle | null, m
   }
   return mask;
 }
+
+/** A cell nearer to the rim than this is half in the dark, pixels. */
+const leastMargin_px = 3;
+/** Rings of the rim are given up while their variance over what noise explains is above this. */
+const calmRim = 1.6;
+
+/**
+ * How far inside the rim the view becomes as calm as noise allows, pixels: at most `most`. What shakes against the rim
+ * leaves residues there that would look like cells; where rim and scene shake together, next to nothing is lost.
+ */
+export function rimMargin(
+  still: { readonly noise: Float32Array; readonly own: Float32Array },
+  width: number,
+  height: number,
+  circle: Circle,
+  most: number,
+): number {
+  const rings = Math.ceil(most);
+  const spread = new Float64Array(rings + 1);
+  const explained = new Float64Array(rings + 1);
+  for (let y = 0; y < height; y++) {
+    for (let x = 0; x < width; x++) {
+      const depth = circle.radius - distance({ x, y }, circle);
+      if (depth < 0 || depth > rings) continue;
+      const ring = Math.floor(depth);
+      const i = y * width + x;
+      spread[ring]! += still.own[i]! * still.own[i]!;
+      explained[ring]! += still.noise[i]! * still.noise[i]!;
+    }
+  }
+  let margin = leastMargin_px;
+  for (let ring = 0; ring <= rings; ring++) {
+    if (spread[ring]! > calmRim * explained[ring]!) margin = Math.max(margin, ring + 2);
+  }
+  return Math.min(margin, most);
+}

@@ -2,7 +2,7 @@ import { type Background, boxMean, learnBackground } from "./background.ts";
 import { type ExposurePoints, exposurePoints, fitExposure } from "./exposure.ts";
 import { thresholdFor } from "./false-alarms.ts";
 import { bestKernels, stackSize } from "./kernels/index.ts";
-import { type Circle, findLitCircle, viewMask } from "./lit-view.ts";
+import { type Circle, findLitCircle, rimMargin, viewMask } from "./lit-view.ts";
 import type { VisionSettings } from "./settings.ts";
 import { detectionSigma_px, findSpotKinds, type Placed, type SpotKind } from "./spot-kind.ts";
 import { findTexture, measureShift, type Texture } from "./steady.ts";
@@ -151,10 +151,7 @@ function learnStillLayer(samples: readonly Sample[], width: number, height: numb
       out,
     );
     const circle = roundCircle(findLitCircle(still.level, width, height));
-    // The rim of the view is steep: what shake leaves uncorrected there would look like cells.
-    const wobble = Math.max(...placed.map((p) => Math.max(Math.abs(p.shift.x), Math.abs(p.shift.y))));
-    const margin = circle ? Math.max(6, 0.02 * circle.radius) + Math.min(wobble, 10) : 0;
-    const inView = viewMask(width, height, circle, margin);
+    const inView = viewMask(width, height, circle, circle ? widestMargin(circle, placed) : 0);
     const texture = chooseTexture(still, inView, circle, width, height);
     const next = placeAll(texture, exposurePoints(still.level, inView), samples, width);
     layer = { still, circle, inView, texture, placed: next };
@@ -162,7 +159,18 @@ function learnStillLayer(samples: readonly Sample[], width: number, height: numb
     placed = next;
     if (!moved) break;
   }
-  return layer!;
+  const { circle, still } = layer!;
+  if (!circle) return layer!;
+  return {
+    ...layer!,
+    inView: viewMask(width, height, circle, rimMargin(still, width, height, circle, widestMargin(circle, placed))),
+  };
+}
+
+/** The rim of the view is steep: what shake leaves uncorrected there would look like cells. */
+function widestMargin(circle: Circle, placed: readonly Placed[]): number {
+  const wobble = Math.max(...placed.map((p) => Math.max(Math.abs(p.shift.x), Math.abs(p.shift.y))));
+  return Math.max(6, 0.02 * circle.radius) + Math.min(wobble, 10);
 }
 
 /** Texture within the view if there is enough; else with the rim of the view. */

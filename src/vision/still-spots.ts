@@ -43,7 +43,10 @@ export function separateStill(
     const x = i % width;
     const y = Math.floor(i / width);
     const base = ringMedian(still.level, width, height, x, y, 3.5 * sigma, 5.5 * sigma);
-    if (!calm(still, width, height, x, y, 2 * sigma) && lingers(placed, base, still.noise[i]!, width, height, kind, x, y)) {
+    if (
+      !calm(still, width, height, x, y, 2 * sigma) &&
+      lingers(placed, base, still.noise[i]!, width, height, kind, x, y)
+    ) {
       fill(level, width, height, x, y, 3.2 * sigma, base);
     } else {
       found.push({ x_px: x, y_px: y });
