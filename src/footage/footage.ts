@@ -30,6 +30,11 @@ export interface ReadReport {
   readonly framesRead: number;
   /** True when the receiver said "enough" before the end. */
   readonly stoppedEarly: boolean;
+  /**
+   * Index of every frame whose picture is, to the last bit, the one before: filled in by a converter or by a camera that
+   * missed its time. Nothing was seen at its time; it is no sign of rest.
+   */
+  readonly repeatedFrames: readonly number[];
   readonly warnings: readonly Warning[];
 }
 

@@ -5,11 +5,13 @@ import { sniffContainer } from "./container/sniff.ts";
 import type { Decoder } from "./decoder.ts";
 import type { Footage, FootageSettings } from "./footage.ts";
 import { type DecoderMaker, openRecording } from "./open.ts";
-import type { Recording } from "./recording.ts";
 import { emptyFile, notAVideo } from "./refusals.ts";
 import { type DescribedTrack, describeTrack } from "./samples/describe.ts";
 import type { SampleSource } from "./samples/samples-decoder.ts";
-import { describeByProbe, type Probe } from "./wasm/describe-by-probe.ts";
+import type { CoreLoader, MountableFile } from "./wasm/core.ts";
+import { describeByProbe } from "./wasm/describe-by-probe.ts";
+import { probeRecording } from "./wasm/probe.ts";
+import { wasmDecoder } from "./wasm/wasm-decoder.ts";
 
 /** A file and the ways of decoding it where we run (Node or a browser's worker). */
 export interface OpenableSource {
@@ -19,9 +21,9 @@ export interface OpenableSource {
   readonly source: Source;
   /** The fast decoder of this place; null when it isn't there. */
   readonly fast: (source: SampleSource) => Promise<Decoder | null>;
-  /** Asks ffmpeg in WebAssembly what the file holds; null when it finds nothing. */
-  readonly probe: () => Promise<Probe | null>;
-  readonly wasm: () => Promise<Decoder>;
+  /** The same file for ffmpeg in WebAssembly, and the way to load that. */
+  readonly mountable: MountableFile;
+  readonly loadCore: CoreLoader;
 }
 
 /** Tells what a file is by its content, describes it, and opens it with the best decoder that the settings allow. */
@@ -34,9 +36,15 @@ export async function openSource(file: OpenableSource, settings: FootageSettings
 
   const input = new Input({ formats: [MP4, QTFF, MATROSKA, WEBM], source: file.source });
   const close = () => input.dispose();
+  const probe = () =>
+    probeRecording(file.loadCore, file.mountable, {
+      track: 0,
+      allPackets: true,
+      ignoreEditList: kind === "iso-bmff",
+    });
   try {
     const described = kind === "iso-bmff" || kind === "matroska" ? await describe(input, file) : null;
-    const recording = described?.recording ?? (await describeByProbe(file.probe, bytes, name, kind, head));
+    const recording = described?.recording ?? (await describeByProbe(probe, bytes, name, kind));
     return await openRecording(recording, makers(file, described, settings), settings, close);
   } catch (error) {
     close();
@@ -58,6 +66,6 @@ function makers(file: OpenableSource, described: DescribedTrack | null, settings
   const wanted = settings.decoder ?? "auto";
   const ways: DecoderMaker[] = [];
   if (wanted !== "wasm" && described?.decodable) ways.push(() => file.fast(described));
-  if (wanted !== "native") ways.push(file.wasm);
+  if (wanted !== "native") ways.push(async () => wasmDecoder(file.loadCore, file.mountable));
   return ways;
 }

@@ -11,8 +11,8 @@ import { decoderGaveUp } from "./warnings.ts";
 /** Makes a decoder when it is its turn; null when there is none of this kind here. */
 export type DecoderMaker = () => Promise<Decoder | null>;
 
-/** Codecs of which every decoder here is known to read all that cameras write: failing then means damage. */
-const wellKnown = /^(avc|hev1|hvc1|vp0?[89]|av01|mjpeg|mpeg4|h264|hevc|rawvideo)/i;
+/** Codecs that every decoder here reads: failing then means damage. */
+const wellKnown = /^(avc|hev1|hvc1|vp0?[89]|mjpeg|mpeg4|h264|hevc|rawvideo)/i;
 
 /**
  * Opens a described recording with the first decoder that gives its first picture, and keeps the others in reserve.
@@ -50,7 +50,7 @@ export async function openRecording(
       return factsOf(recording, opened.first, clock, decoder.name);
     },
     async read(receive, signal) {
-      const reading = new Reading(recording, clock.factor, receive, waiting.length > 0);
+      const reading = new Reading(recording, clock.factor, receive);
       const warnings = [...standing];
       try {
         await decoder.decode(recording, reading, signal);
@@ -73,6 +73,7 @@ export async function openRecording(
       return {
         framesRead: reading.framesRead,
         stoppedEarly: reading.stoppedEarly,
+        repeatedFrames: reading.repeatedFrames,
         warnings: [...warnings, ...reading.warnings()],
       };
     },

@@ -4,7 +4,7 @@ import { fingerprint } from "./picture/fingerprint.ts";
 import { turnUpright } from "./picture/upright.ts";
 import { type Recording, seconds } from "./recording.ts";
 import { sizeChanges } from "./refusals.ts";
-import { cutOff, framesMissing, outOfOrder } from "./warnings.ts";
+import { cutOff, framesMissing, framesRepeated, outOfOrder } from "./warnings.ts";
 
 /** The pictures delivered so far, enough to tell whether another decoder gives the same ones. */
 export interface Trace {
@@ -22,7 +22,8 @@ export class Reading implements PictureTaker {
   framesRead = 0;
   /** False as soon as the second decoder's pictures differ from those delivered. */
   sameAgain = true;
-  readonly #trace: Trace | null;
+  readonly repeatedFrames: number[] = [];
+  readonly #trace: Trace = { ticks: [], fingerprints: [] };
   #first: number | null = null;
   #last = Number.NEGATIVE_INFINITY;
   #late = 0;
@@ -35,10 +36,7 @@ export class Reading implements PictureTaker {
     readonly recording: Recording,
     readonly timeFactor: number,
     readonly receive: (frame: Frame) => Appetite,
-    keepTrace: boolean,
-  ) {
-    this.#trace = keepTrace ? { ticks: [], fingerprints: [] } : null;
-  }
+  ) {}
 
   /** To be called before another decoder starts from the first picture. */
   again(): void {
@@ -62,8 +60,10 @@ export class Reading implements PictureTaker {
       throw sizeChanges(this.recording.name, `${this.#size.width} × ${this.#size.height}`, `${width} × ${height}`);
     this.#last = ticks;
     this.#first ??= ticks;
-    this.#trace?.ticks.push(ticks);
-    this.#trace?.fingerprints.push(fingerprint(picture.luma));
+    const print = fingerprint(picture.luma);
+    if (print === this.#trace.fingerprints.at(-1)) this.repeatedFrames.push(this.framesRead);
+    this.#trace.ticks.push(ticks);
+    this.#trace.fingerprints.push(print);
     const frame = this.#frame(picture, ticks - this.#first);
     this.framesRead++;
     if (this.receive(frame) === "more") return "more";
@@ -72,7 +72,7 @@ export class Reading implements PictureTaker {
   }
 
   #compare({ ticks, luma }: DecodedPicture, index: number): Appetite {
-    this.sameAgain = this.#trace?.ticks[index] === ticks && this.#trace.fingerprints[index] === fingerprint(luma);
+    this.sameAgain = this.#trace.ticks[index] === ticks && this.#trace.fingerprints[index] === fingerprint(luma);
     return this.sameAgain ? "more" : "enough";
   }
 
@@ -96,6 +96,7 @@ export class Reading implements PictureTaker {
   warnings(): Warning[] {
     const { recording } = this;
     const warnings = this.#late > 0 ? [outOfOrder(this.#late)] : [];
+    if (this.repeatedFrames.length > 0) warnings.push(framesRepeated(this.repeatedFrames.length, this.framesRead));
     if (this.stoppedEarly) return warnings;
     const expected = recording.ticks.length;
     const afterLast = recording.ticks.length - recording.ticks.findLastIndex((ticks) => ticks <= this.#last) - 1;

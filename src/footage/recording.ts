@@ -18,6 +18,8 @@ export interface Recording {
   readonly tick: { readonly numerator: number; readonly denominator: number };
   /** Rising times in ticks of every frame that belongs to the recording, as the container lists them. */
   readonly ticks: Float64Array;
+  /** Time of the first packet as stored (decode order), before any edit list: where another demuxer's clock is tied to. */
+  readonly firstPacketTicks: number;
   /** Whether a frame of this time belongs to the recording (edit lists). */
   keeps(ticks: number): boolean;
   /** Frames per container second, from the middle frame interval; null when there is one frame. */

@@ -6,7 +6,12 @@ export const noSuchFile = (name: string): InputError =>
   new InputError("recording-missing", "There is no such recording.", name, "Check the name and the folder.");
 
 export const unreadableFile = (name: string, reason: string): InputError =>
-  new InputError("recording-unreadable", `The recording can't be opened: ${reason}.`, name, "Check that it is a file that you may read.");
+  new InputError(
+    "recording-unreadable",
+    `The recording can't be opened: ${reason}.`,
+    name,
+    "Check that it is a file that you may read.",
+  );
 
 export const emptyFile = (name: string): InputError =>
   new InputError("recording-empty", "The recording is empty (0 bytes).", name, `${originals}.`);

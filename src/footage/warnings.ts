@@ -26,6 +26,11 @@ export const framesMissing = (missing: number, expected: number): Warning => ({
   message: `${missing} of ${expected} frames could not be decoded; the others keep their own times.`,
 });
 
+export const framesRepeated = (repeated: number, read: number): Warning => ({
+  code: "frames-repeated",
+  message: `${repeated} of ${read} frames are exact copies of the frame before, as converters and messengers put in to even out the rate. They show nothing new; measure the untouched original if you have it.`,
+});
+
 /** @param lost_s capture seconds lost at the end, null when the file doesn't tell */
 export const cutOff = (decoded: number, expected: number | null, lost_s: number | null): Warning => ({
   code: "recording-cut-off",

@@ -31,7 +31,8 @@ export function sniffContainer(bytes: Uint8Array): ContainerKind | null {
   if (bytes.length >= 8 && firstBoxes.has(text(bytes, 4, 4))) return "iso-bmff";
   if (startsWith(bytes, ebml)) return "matroska";
   if (text(bytes, 0, 4) === "RIFF" && text(bytes, 8, 4) === "AVI ") return "avi";
-  if ([asf, flv, programStream, elementaryVideo].some((signature) => startsWith(bytes, signature))) return "other video";
+  if ([asf, flv, programStream, elementaryVideo].some((signature) => startsWith(bytes, signature)))
+    return "other video";
   if (text(bytes, 0, 4) === "OggS" || isTransportStream(bytes)) return "other video";
   return null;
 }

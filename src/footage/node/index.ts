@@ -4,7 +4,6 @@ import { FilePathSource } from "mediabunny";
 import type { Footage, FootageSettings } from "../footage.ts";
 import { openSource } from "../open-source.ts";
 import { noSuchFile, unreadableFile } from "../refusals.ts";
-import { wasmDecoder, wasmProbe } from "../wasm/wasm-decoder.ts";
 import { loadCoreInNode } from "./core-in-node.ts";
 import { bytesOfFile } from "./file-bytes.ts";
 import { nativeDecoder } from "./native.ts";
@@ -20,15 +19,14 @@ export async function openInNode(path: string, settings: FootageSettings): Promi
   const name = basename(path);
   const handle = await openFile(path, name);
   const { size } = await handle.stat();
-  const file = pathAsBlob(path, name, size);
   const footage = openSource(
     {
       name,
       bytes: bytesOfFile(handle, size),
       source: new FilePathSource(path),
       fast: nativeDecoder,
-      probe: async () => wasmProbe(await loadCoreInNode(), file),
-      wasm: () => wasmDecoder(loadCoreInNode, file),
+      mountable: pathAsBlob(path, size),
+      loadCore: loadCoreInNode,
     },
     settings,
   );

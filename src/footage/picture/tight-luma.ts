@@ -33,7 +33,7 @@ export class LumaTightener {
       let at = offset + y * stride;
       for (let i = y * width, end = i + width; i < end; i++, at += 2) {
         const value = ((bytes[at]! | (bytes[at + 1]! << 8)) + half) >> shift;
-        out[i] = value > 255 ? 255 : value;
+        out[i] = Math.min(value, 255);
       }
     }
     return out;

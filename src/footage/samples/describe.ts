@@ -6,8 +6,8 @@ import { isoCutShort, readIsoMovie } from "../container/iso-movie.ts";
 import { matroskaCutShort } from "../container/matroska-end.ts";
 import { carriesSlowMotionMarks } from "../container/slow-motion-marks.ts";
 import { type ContainerKind, containerName } from "../container/sniff.ts";
-import { nothingToRead, noVideoTrack } from "../refusals.ts";
 import type { Recording } from "../recording.ts";
+import { nothingToRead, noVideoTrack } from "../refusals.ts";
 import { captureRateFromTags } from "../time/capture-rate-tag.ts";
 import { medianInterval } from "../time/intervals.ts";
 import { pixelsNotSquare, severalTracks, slowMotionMarks } from "../warnings.ts";
@@ -58,7 +58,7 @@ export async function describeTrack(
   const marks = iso && (await carriesSlowMotionMarks(bytes));
   if (marks) warnings.push(slowMotionMarks);
 
-  const { ticks, end } = await packetTimes(track, ticksOf, rule.keeps);
+  const { first, ticks, end } = await packetTimes(track, ticksOf, rule.keeps);
   if (ticks.length === 0) throw nothingToRead(name, cutShort);
   const interval = medianInterval(ticks);
   const tags = await input.getMetadataTags();
@@ -77,6 +77,7 @@ export async function describeTrack(
       rotation_deg: await track.getRotation(),
       tick: { numerator: 1, denominator: ticksPerSecond },
       ticks,
+      firstPacketTicks: first,
       keeps: rule.keeps,
       containerRate_hz: interval !== null && interval > 0 ? ticksPerSecond / interval : null,
       // Marked parts are stretched by the player only: the stored times are capture times, whatever the tag says.
@@ -93,16 +94,18 @@ async function packetTimes(
   track: InputVideoTrack,
   ticksOf: (timestamp_s: number) => number,
   keeps: (ticks: number) => boolean,
-): Promise<{ ticks: Float64Array; end: number }> {
+): Promise<{ first: number; ticks: Float64Array; end: number }> {
   const times: number[] = [];
+  let first: number | null = null;
   let end = 0;
   for await (const packet of new EncodedPacketSink(track).packets(undefined, undefined, { metadataOnly: true })) {
     const ticks = ticksOf(packet.timestamp);
+    first ??= ticks;
     if (!keeps(ticks)) continue;
     times.push(ticks);
     end = Math.max(end, ticksOf(packet.timestamp + packet.duration));
   }
-  return { ticks: Float64Array.from(times).sort(), end };
+  return { first: first ?? 0, ticks: Float64Array.from(times).sort(), end };
 }
 
 async function internalCodec(track: InputVideoTrack): Promise<string> {

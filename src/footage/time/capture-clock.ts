@@ -1,5 +1,5 @@
-import type { FootageFacts } from "../footage.ts";
 import type { Warning } from "../../quantities/index.ts";
+import type { FootageFacts } from "../footage.ts";
 
 /** How container time becomes capture time, and on whose word. */
 export interface CaptureClock {

@@ -1,0 +1,1 @@
+export type { Footage, FootageFacts, FootageSettings, ReadReport } from "./footage.ts";
