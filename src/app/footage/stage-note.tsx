@@ -1,0 +1,16 @@
+import type { Pictures } from "./use-pictures.ts";
+
+/** What the stage says while it has no picture. */
+export function StageNote({ pictures, hasBackground }: { pictures: Pictures; hasBackground: boolean }) {
+  const { picture, problem } = pictures;
+  if (picture) return null;
+  if (!problem) return <p className="stage-note">Opening the recording …</p>;
+  return (
+    <div className={hasBackground ? "stage-note at-top" : "stage-note"} role="alert">
+      <p>
+        <strong>{problem.title}.</strong> {problem.what}
+      </p>
+      <p>{hasBackground ? "The still background is shown in their place." : problem.remedy}</p>
+    </div>
+  );
+}

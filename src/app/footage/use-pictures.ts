@@ -1,0 +1,56 @@
+import { useCallback, useEffect, useRef, useState } from "react";
+import { type OpenedPictures, openPictures, type PicturesWorker } from "../../../workers/index.ts";
+import { type Problem, problemOf } from "../state/problem.ts";
+
+/** A decoded frame on show. */
+export interface Picture {
+  readonly frame: number;
+  readonly bitmap: ImageBitmap;
+}
+
+/** A recording being looked at. */
+export interface Pictures {
+  /** Null until the recording is open. */
+  readonly opened: OpenedPictures | null;
+  /** The latest picture that came; null before the first. */
+  readonly picture: Picture | null;
+  /** Why there are no pictures; null while there is nothing wrong. */
+  readonly problem: Problem | null;
+}
+
+/** Opens a recording for looking at and keeps asking for the frame that is wanted. */
+export function usePictures(recording: File, captureFps: number | null, frame: number): Pictures {
+  const worker = useRef<PicturesWorker | null>(null);
+  const [opened, setOpened] = useState<OpenedPictures | null>(null);
+  const [picture, setPicture] = useState<Picture | null>(null);
+  const [problem, setProblem] = useState<Problem | null>(null);
+
+  const show = useCallback((next: Picture | null) => {
+    setPicture((last) => {
+      if (last !== next) last?.bitmap.close();
+      return next;
+    });
+  }, []);
+
+  useEffect(() => {
+    const open = openPictures(recording, captureFps, {
+      opened: setOpened,
+      shown: (frame, bitmap) => show({ frame, bitmap }),
+      failed: (error) => setProblem(problemOf("The pictures can’t be shown", error)),
+    });
+    worker.current = open;
+    return () => {
+      open.close();
+      worker.current = null;
+      show(null);
+      setOpened(null);
+      setProblem(null);
+    };
+  }, [recording, captureFps, show]);
+
+  // Asked again when the recording is another one: `opened` is a new object then.
+  // biome-ignore lint/correctness/useExhaustiveDependencies: see above
+  useEffect(() => worker.current?.show(frame), [frame, opened]);
+
+  return { opened, picture, problem };
+}
