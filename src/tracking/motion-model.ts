@@ -39,6 +39,8 @@ export interface Belief {
   vv: number;
 }
 
+/** No cell is faster than this many standard deviations of velocity. */
+export const fastest = 3;
 /** How fast a cell's pace is forgotten once it seems slower. */
 const paceForgotten_s = 0.7;
 
@@ -51,7 +53,9 @@ export function firstBelief(model: MotionModel, t_s: number, x: number, y: numbe
 export function predict(model: MotionModel, b: Belief, t_s: number): Belief {
   const h = t_s - b.t_s;
   const dt = Math.abs(h);
-  const pace2 = Math.max(b.vx * b.vx + b.vy * b.vy, b.pace2 / (1 + dt / paceForgotten_s));
+  const seen2 = Math.max(b.vx * b.vx + b.vy * b.vy, b.pace2 / (1 + dt / paceForgotten_s));
+  // One wrong pairing must not make a cell so fast that anything can be it.
+  const pace2 = Math.min(seen2, (fastest * model.speedSd_px_s) ** 2);
   const q = model.turning_per_s * pace2 + restlessness_per_s * model.speedSd_px_s ** 2;
   return {
     t_s,

@@ -1,0 +1,2 @@
+export type { FootageEvidence } from "./evidence.ts";
+export { judgeFootage } from "./judge-footage.ts";
