@@ -63,6 +63,7 @@ export const CellsTable = memo(function CellsTable({ measured, sort, cell, only,
       onScroll={(event) => setTop(event.currentTarget.scrollTop)}
     >
       <table
+        // biome-ignore lint/a11y/noNoninteractiveElementToInteractiveRole: rows of this table are chosen as in a grid
         role="grid"
         aria-label="Cells"
         aria-rowcount={rows.length + 1}
@@ -72,7 +73,7 @@ export const CellsTable = memo(function CellsTable({ measured, sort, cell, only,
       >
         <CellsHead sort={sort} unit={unit} dispatch={dispatch} />
         <tbody>
-          {first > 0 && <tr className="gap" style={{ height: first * rowHeight }} role="none" />}
+          {first > 0 && <Gap height={first * rowHeight} />}
           {rows.slice(first, end).map((p, i) => (
             <CellsRow
               key={p}
@@ -83,9 +84,18 @@ export const CellsTable = memo(function CellsTable({ measured, sort, cell, only,
               choose={() => choose(p)}
             />
           ))}
-          {end < rows.length && <tr className="gap" style={{ height: (rows.length - end) * rowHeight }} role="none" />}
+          {end < rows.length && <Gap height={(rows.length - end) * rowHeight} />}
         </tbody>
       </table>
     </section>
   );
 });
+
+/** Stands for rows out of sight. */
+function Gap({ height }: { height: number }) {
+  return (
+    <tr className="gap" style={{ height }}>
+      <td colSpan={7} />
+    </tr>
+  );
+}

@@ -3,7 +3,14 @@ import { exampleTrial } from "../../../tests/helpers/example-trial.ts";
 import { bareTrial } from "../../trial/index.ts";
 import type { Problem } from "./problem.ts";
 import { type WorkbenchAction, workbenchReducer } from "./workbench-reducer.ts";
-import { chosenTrial, emptyWorkbench, type TrialSource, titleOf, type WorkbenchState } from "./workbench-state.ts";
+import {
+  chosenTrial,
+  emptyWorkbench,
+  isOutdated,
+  type TrialSource,
+  titleOf,
+  type WorkbenchState,
+} from "./workbench-state.ts";
 
 const source = (name: string): TrialSource => ({
   name,
@@ -12,6 +19,7 @@ const source = (name: string): TrialSource => ({
   warnings: [],
 });
 const problem: Problem = { title: "x could not be opened", what: "w", where: "", remedy: "r", detail: "" };
+const as = bareTrial("a.mp4");
 const progress = { stage: "finding cells", done: 3, total: 10 };
 
 function stateAfter(...actions: WorkbenchAction[]): WorkbenchState {
@@ -42,7 +50,7 @@ describe("workbenchReducer", () => {
     expect(running.trials[0]!.work).toEqual({ state: "running", progress, left_s: 4 });
     expect(workbenchReducer(running, { type: "measure", ids: [1] }).trials[0]!.work.state).toBe("running");
     const measured = exampleTrial();
-    const done = workbenchReducer(running, { type: "measured", id: 1, measured });
+    const done = workbenchReducer(running, { type: "measured", id: 1, measured, as });
     expect(done.trials[0]).toMatchObject({ work: { state: "idle" }, saved: false });
     expect(done.trials[0]!.measured).toBe(measured);
     expect(workbenchReducer(done, { type: "saved", id: 1 }).trials[0]!.saved).toBe(true);
@@ -50,13 +58,24 @@ describe("workbenchReducer", () => {
 
   it("keeps the earlier measurement when a later one fails or is stopped", () => {
     const measured = exampleTrial();
-    const had = stateAfter(two, { type: "measured", id: 1, measured }, { type: "measure", ids: [1] });
+    const had = stateAfter(two, { type: "measured", id: 1, measured, as }, { type: "measure", ids: [1] });
     const failed = workbenchReducer(had, { type: "failed", id: 1, problem });
     expect(failed.trials[0]).toMatchObject({ work: { state: "idle" }, problem });
     expect(failed.trials[0]!.measured).toBe(measured);
     const stopped = workbenchReducer(had, { type: "stopped", id: 1 });
     expect(stopped.trials[0]).toMatchObject({ work: { state: "idle" }, problem: null });
     expect(stopped.trials[0]!.measured).toBe(measured);
+  });
+
+  it("knows when the description was changed after measuring", () => {
+    const measured = exampleTrial();
+    const state = stateAfter(two, { type: "described", id: 1, description: as });
+    expect(isOutdated(state.trials[0]!)).toBe(false);
+    const done = workbenchReducer(state, { type: "measured", id: 1, measured, as });
+    expect(isOutdated(done.trials[0]!)).toBe(false);
+    const changed = workbenchReducer(done, { type: "described", id: 1, description: { ...as, captureFps: 240 } });
+    expect(isOutdated(changed.trials[0]!)).toBe(true);
+    expect(changed.trials[0]!.measured).toBe(measured);
   });
 
   it("puts the neighbour on the bench when the trial on it is closed", () => {

@@ -1,4 +1,5 @@
 import type { MeasuredTrial, Progress } from "../../quantities/index.ts";
+import type { TrialDescription } from "../../trial/index.ts";
 import type { Problem } from "./problem.ts";
 import type { OpenTrial, TrialSource, WorkbenchState } from "./workbench-state.ts";
 
@@ -6,6 +7,8 @@ export type WorkbenchAction =
   | { readonly type: "opened"; readonly sources: readonly TrialSource[]; readonly problems: readonly Problem[] }
   | { readonly type: "chosen"; readonly id: number }
   | { readonly type: "closed"; readonly id: number }
+  /** Someone stated scale or rate by hand. */
+  | { readonly type: "described"; readonly id: number; readonly description: TrialDescription }
   | { readonly type: "measure"; readonly ids: readonly number[] }
   | {
       readonly type: "progressed";
@@ -13,7 +16,13 @@ export type WorkbenchAction =
       readonly progress: Progress;
       readonly left_s: number | null;
     }
-  | { readonly type: "measured"; readonly id: number; readonly measured: MeasuredTrial }
+  | {
+      readonly type: "measured";
+      readonly id: number;
+      readonly measured: MeasuredTrial;
+      /** The description it went by. */
+      readonly as: TrialDescription;
+    }
   | { readonly type: "failed"; readonly id: number; readonly problem: Problem }
   | { readonly type: "stopped"; readonly id: number }
   | { readonly type: "saved"; readonly id: number }
@@ -29,6 +38,8 @@ export function workbenchReducer(state: WorkbenchState, action: WorkbenchAction)
       return { ...state, chosen: action.id };
     case "closed":
       return closed(state, action.id);
+    case "described":
+      return changed(state, [action.id], (trial) => ({ ...trial, description: action.description }));
     case "measure":
       return changed(state, action.ids, (trial) =>
         trial.work.state === "idle" ? { ...trial, work: { state: "waiting" } } : trial,
@@ -44,6 +55,7 @@ export function workbenchReducer(state: WorkbenchState, action: WorkbenchAction)
         ...trial,
         work: { state: "idle" },
         measured: action.measured,
+        measuredAs: action.as,
         saved: false,
         problem: null,
       }));
@@ -68,6 +80,7 @@ function opened(state: WorkbenchState, sources: readonly TrialSource[], problems
       work: { state: "idle" },
       measured: null,
       saved: false,
+      measuredAs: null,
       problem: null,
     }),
   );

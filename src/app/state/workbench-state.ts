@@ -24,6 +24,8 @@ export interface OpenTrial extends TrialSource {
   /** The last measurement that ended; kept when a later one fails. */
   readonly measured: MeasuredTrial | null;
   readonly saved: boolean;
+  /** The description that the measurement went by; null before the first. */
+  readonly measuredAs: TrialDescription | null;
   /** Why the last attempt gave nothing; null when it did, or was stopped. */
   readonly problem: Problem | null;
 }
@@ -42,6 +44,11 @@ export const emptyWorkbench: WorkbenchState = { trials: [], chosen: null, proble
 /** The trial on the bench. */
 export function chosenTrial(state: WorkbenchState): OpenTrial | null {
   return state.trials.find((trial) => trial.id === state.chosen) ?? null;
+}
+
+/** True when the description was changed since the measurement that is shown. */
+export function isOutdated(trial: OpenTrial): boolean {
+  return trial.measured !== null && trial.measuredAs !== trial.description;
 }
 
 /** How the trial is called: as its description names it, else by its folder or file. */
