@@ -5,5 +5,3 @@ export type { Run } from "./host/one-answer.ts";
 export type { PicturesWorker } from "./host/pictures.ts";
 export { openPictures } from "./host/pictures.ts";
 export { startMakingResults } from "./host/results.ts";
-export type { TimeLeft } from "./host/time-left.ts";
-export { timeLeft } from "./host/time-left.ts";

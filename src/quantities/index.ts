@@ -21,4 +21,6 @@ export type { Random } from "./random.ts";
 export { seededRandom } from "./random.ts";
 export type { Sighting, Sightings } from "./sightings.ts";
 export { SightingsBuilder } from "./sightings.ts";
+export type { TimeLeft } from "./time-left.ts";
+export { timeLeft } from "./time-left.ts";
 export type { Warning } from "./warning.ts";

@@ -1,4 +1,4 @@
-import type { Progress } from "../../src/quantities/index.ts";
+import type { Progress } from "./context.ts";
 
 /** Watches the progress of a run and says how long its present stage will still take. */
 export interface TimeLeft {

@@ -1,0 +1,57 @@
+#!/usr/bin/env node
+import { InputError } from "../quantities/index.ts";
+import { usageError } from "./arguments.ts";
+import { measure, help as measureHelp } from "./commands/measure.ts";
+import { workbench, help as workbenchHelp } from "./commands/workbench.ts";
+import type { Io } from "./io.ts";
+import { errorJson, errorText, machineIo, personIo } from "./terminal.ts";
+import { tool } from "./tool.ts";
+
+interface Command {
+  readonly about: string;
+  readonly help: string;
+  run(args: readonly string[], json: boolean, io: Io): Promise<void>;
+}
+
+const commands: Readonly<Record<string, Command>> = {
+  measure: { about: "measure one trial", help: measureHelp, run: measure },
+  workbench: {
+    about: "serve the workbench to this computer's browser",
+    help: workbenchHelp,
+    run: (args, _, io) => workbench(args, io),
+  },
+};
+
+const help = `lodewake COMMAND [options]
+
+Measures magnetotactic bacteria from video: calibrated speeds with 95 % intervals.
+
+${Object.entries(commands)
+  .map(([name, { about }]) => `  ${name.padEnd(12)}${about}`)
+  .join("\n")}
+
+lodewake COMMAND --help says what a command takes. lodewake --version prints the version.
+Exit codes: 0 done, 2 the request or an input is wrong, 1 Lodewake failed.`;
+
+async function run(args: readonly string[], json: boolean, io: Io): Promise<void> {
+  const [name, ...rest] = args;
+  if (name === "--version") return io.out(tool.version);
+  if (name === undefined) throw usageError("", "No command was given.");
+  if (name === "--help" || name === "-h" || name === "help") return io.out(help);
+  const command = commands[name];
+  if (!command) throw usageError("", `There is no command "${name}".`);
+  if (rest.includes("--help") || rest.includes("-h")) return io.out(command.help);
+  await command.run(rest, json, io);
+}
+
+const args = process.argv.slice(2);
+const json = args.includes("--json");
+const now_s = () => performance.now() / 1000;
+const io = (json ? machineIo : personIo)(process.stdout, process.stderr, now_s);
+try {
+  await run(args, json, io);
+} catch (error) {
+  if (json) process.stderr.write(`${errorJson(error)}\n`);
+  else io.note(errorText(error));
+  process.exitCode = error instanceof InputError ? 2 : 1;
+}

@@ -1,0 +1,4 @@
+import type { WorkerSidePort } from "./contract/port.ts";
+import { servePictures } from "./side/pictures.ts";
+
+servePictures(self as unknown as WorkerSidePort);
