@@ -19,11 +19,20 @@ const knownAfter = 5;
 /** A cell sighted only once is given up after this many missed frames; its velocity could be anything. */
 const newcomerFrames = 2.5;
 
-/** Variance of a sighting's position, the mean of both axes, pixels². */
-export function varianceOf(sightings: Sightings, row: number): number {
-  const x = sightings.seX_px[row] as number;
-  const y = sightings.seY_px[row] as number;
-  return (x * x + y * y) / 2 + floorVariance_px2;
+/** A sighting longer than this over the usual length is of two cells, or of one and part of another. */
+const tooLong = 1.4;
+
+/**
+ * Variance of every sighting's position along one axis, pixels²: the mean of both axes. Where a sighting is much longer
+ * than the clip's usually are, it shows cells that touch, and its middle may be anywhere between theirs.
+ */
+export function positionVariances(s: Sightings): Float64Array {
+  const usual = s.count > 0 ? (s.major_px.slice().sort()[s.count >> 1] as number) : 0;
+  return Float64Array.from({ length: s.count }, (_, i) => {
+    const own = ((s.seX_px[i] as number) ** 2 + (s.seY_px[i] as number) ** 2) / 2;
+    const excess = (s.major_px[i] as number) ** 2 - (tooLong * usual) ** 2;
+    return own + floorVariance_px2 + Math.max(0, excess) / 2;
+  });
 }
 
 /**
@@ -35,6 +44,7 @@ export class Follower {
   private readonly sightings: Sightings;
   private readonly index: FrameIndex;
   private readonly model: MotionModel;
+  private readonly variances: Float64Array;
   private readonly settings: TrackingSettings;
   private readonly frameInterval_s: number;
   private live: Piece[] = [];
@@ -42,12 +52,14 @@ export class Follower {
 
   constructor(
     sightings: Sightings,
+    variances: Float64Array,
     index: FrameIndex,
     model: MotionModel,
     settings: TrackingSettings,
     frameInterval_s: number,
   ) {
     this.sightings = sightings;
+    this.variances = variances;
     this.index = index;
     this.model = model;
     this.settings = settings;
@@ -80,7 +92,7 @@ export class Follower {
     predicted.forEach((b, cell) => {
       const reach = Math.sqrt(this.settings.gate * (b.pp + 4));
       this.index.near(frame, b.x, b.y, reach, (row) => {
-        const s = b.pp + varianceOf(sightings, row);
+        const s = b.pp + (this.variances[row] as number);
         const d2 = distance2(sightings, row, b) / s;
         // Minus twice the log of the likelihood that this is the cell, over the likelihood that it is a newcomer.
         if (d2 <= this.settings.gate)
@@ -136,7 +148,7 @@ export class Follower {
       const vx = ((sightings.x_px[row] as number) - piece.belief.x) / waited;
       const vy = ((sightings.y_px[row] as number) - piece.belief.y) / waited;
       piece.belief = {
-        ...update(around, sightings.x_px[row] as number, sightings.y_px[row] as number, varianceOf(sightings, row)),
+        ...update(around, sightings.x_px[row] as number, sightings.y_px[row] as number, this.variances[row] as number),
         vx,
         vy,
       };
@@ -148,7 +160,7 @@ export class Follower {
   private extend(cell: number, predicted: Belief, row: number): void {
     const { sightings } = this;
     const piece = this.live[cell] as Piece;
-    const variance = varianceOf(sightings, row);
+    const variance = this.variances[row] as number;
     if (piece.rows.length >= 3) piece.surprises.push(distance2(sightings, row, predicted) / (predicted.pp + variance));
     piece.belief = update(predicted, sightings.x_px[row] as number, sightings.y_px[row] as number, variance);
     piece.rows.push(row);
@@ -158,7 +170,7 @@ export class Follower {
     const { sightings } = this;
     const x = sightings.x_px[row] as number;
     const y = sightings.y_px[row] as number;
-    const belief = firstBelief(this.model, t_s, x, y, varianceOf(sightings, row));
+    const belief = firstBelief(this.model, t_s, x, y, this.variances[row] as number);
     const piece: Piece = { rows: [row], belief, surprises: [] };
     this.live.push(piece);
     this.pieces.push(piece);

@@ -1,6 +1,5 @@
 import type { Sightings } from "../quantities/index.ts";
 import { assign, type Pairing } from "./assignment.ts";
-import { varianceOf } from "./follow.ts";
 import { type Belief, firstBelief, type MotionModel, predict, update } from "./motion-model.ts";
 import type { TrackingSettings } from "./settings.ts";
 
@@ -19,14 +18,15 @@ const fits = 20;
 export function joinPieces(
   pieces: readonly (readonly number[])[],
   sightings: Sightings,
+  variances: Float64Array,
   times_s: Float64Array,
   model: MotionModel,
   settings: TrackingSettings,
 ): number[][] {
   const long = pieces.map((rows) => rows.length >= fewest);
-  const ends = pieces.map((rows, p) => (long[p] ? readThrough(rows, sightings, times_s, model) : null));
+  const ends = pieces.map((rows, p) => (long[p] ? readThrough(rows, sightings, variances, times_s, model) : null));
   const starts = pieces.map((rows, p) =>
-    long[p] ? readThrough([...rows].reverse(), sightings, times_s, model) : null,
+    long[p] ? readThrough([...rows].reverse(), sightings, variances, times_s, model) : null,
   );
   const byStart = starts
     .flatMap((start, p) => (start ? [{ start, p }] : []))
@@ -53,13 +53,19 @@ export function joinPieces(
 }
 
 /** What is believed of a cell after all of a piece's sightings, read in the given order. */
-function readThrough(rows: readonly number[], sightings: Sightings, times_s: Float64Array, model: MotionModel): Belief {
+function readThrough(
+  rows: readonly number[],
+  sightings: Sightings,
+  variances: Float64Array,
+  times_s: Float64Array,
+  model: MotionModel,
+): Belief {
   let belief: Belief | null = null;
   for (const row of rows) {
     const t_s = times_s[sightings.frame[row] as number] as number;
     const x = sightings.x_px[row] as number;
     const y = sightings.y_px[row] as number;
-    const variance = varianceOf(sightings, row);
+    const variance = variances[row] as number;
     belief = belief ? update(predict(model, belief, t_s), x, y, variance) : firstBelief(model, t_s, x, y, variance);
   }
   return belief as Belief;

@@ -41,6 +41,7 @@ export function firstGuess(
  */
 export function learnMotion(
   sightings: Sightings,
+  variances: Float64Array,
   index: FrameIndex,
   times_s: Float64Array,
   guess: MotionModel,
@@ -51,7 +52,7 @@ export function learnMotion(
   let model = guess;
   const frames = Math.min(times_s.length, framesThatTeach);
   for (let round = 0; round < rounds; round++) {
-    const follower = new Follower(sightings, index, model, settings, frameInterval_s);
+    const follower = new Follower(sightings, variances, index, model, settings, frameInterval_s);
     for (let f = 0; f < frames; f++) follower.frame(f, times_s[f] as number);
     model = improve(model, follower.pieces, sightings, times_s, frames, area_px2);
   }

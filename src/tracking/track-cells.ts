@@ -6,7 +6,7 @@ import {
   type Sightings,
   throwIfStopped,
 } from "../quantities/index.ts";
-import { Follower } from "./follow.ts";
+import { Follower, positionVariances } from "./follow.ts";
 import { FrameIndex } from "./frame-index.ts";
 import { joinPieces } from "./join.ts";
 import { firstGuess, learnMotion } from "./learn-motion.ts";
@@ -45,9 +45,10 @@ export function trackCells(
   const frames = times_s.length;
   const index = new FrameIndex(sightings, frames);
   const interval_s = medianInterval_s(times_s);
+  const variances = positionVariances(sightings);
   const guess = firstGuess(index, sightings.count / Math.max(1, frames), view.area_px2, interval_s);
-  const motion = learnMotion(sightings, index, times_s, guess, settings, interval_s, view.area_px2);
-  const follower = new Follower(sightings, index, motion, settings, interval_s);
+  const motion = learnMotion(sightings, variances, index, times_s, guess, settings, interval_s, view.area_px2);
+  const follower = new Follower(sightings, variances, index, motion, settings, interval_s);
   for (let f = 0; f < frames; f++) {
     if (f % 100 === 0) {
       throwIfStopped(context.signal);
@@ -56,7 +57,7 @@ export function trackCells(
     follower.frame(f, times_s[f] as number);
   }
   const pieces = follower.pieces.map((p) => p.rows);
-  const joined = joinPieces(pieces, sightings, times_s, motion, settings);
+  const joined = joinPieces(pieces, sightings, variances, times_s, motion, settings);
   const kept = joined.filter((rows) => rows.length >= settings.fewestSightings);
   return {
     paths: tableOf(kept, sightings, times_s, view, motion),

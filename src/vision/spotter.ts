@@ -1,5 +1,6 @@
 import type { Frame, SightingsBuilder } from "../quantities/index.ts";
 import { type Exposure, fitExposure } from "./exposure.ts";
+import { fitTogether, mostTogether } from "./joint-fit.ts";
 import type { Scene } from "./scene.ts";
 import { detectionSigma_px } from "./spot-kind.ts";
 import { axesOf, measureSpot, positionErrors, type SpotShape, type Whitened } from "./spot-shape.ts";
@@ -135,12 +136,32 @@ export class Spotter {
     }
     const read = (f: (typeof first)[number], others: readonly SpotShape[]) =>
       measureSpot(picture, scene.kind.sign, f.x, f.y, sigma, f.freedom, others);
-    for (const f of first) f.spot = read(f, []);
-    for (let round = 0; round < 2; round++) {
-      for (const f of first) {
+    const touching = groupsWithin(first, 6 * sigma);
+    for (const group of touching) {
+      if (group.length > 1 && group.length <= mostTogether) {
+        const start = group.map((k) => ({
+          x: first[k]!.x,
+          y: first[k]!.y,
+          peak: peakAt(picture, scene.kind.sign, first[k]!),
+        }));
+        const others = group.flatMap((k) => first[k]!.near).filter((k) => !group.includes(k));
+        const known = [...new Set(others)].flatMap((k) => first[k]!.spot ?? []);
+        fitTogether(picture, scene.kind.sign, start, sigma, known).forEach((spot, i) => {
+          first[group[i]!]!.spot = spot;
+        });
+      } else {
+        for (const k of group) first[k]!.spot = read(first[k]!, []);
+      }
+    }
+    for (const group of touching) {
+      if (group.length > 1 && group.length <= mostTogether) continue;
+      for (const k of group) {
+        const f = first[k]!;
         if (f.near.length === 0) continue;
-        const others = f.near.map((k) => first[k]!.spot!).filter((s) => s.good);
-        f.spot = read(f, others);
+        f.spot = read(
+          f,
+          f.near.flatMap((j) => (first[j]!.spot?.good ? [first[j]!.spot] : [])),
+        );
       }
     }
     return first.flatMap((f) => (f.spot?.good ? [{ spot: f.spot, snr: f.snr }] : []));
@@ -170,6 +191,28 @@ export class Spotter {
     }
     return count;
   }
+}
+
+/** Spots within reach of one another, directly or through others, as lists of indices. */
+function groupsWithin(spots: readonly { readonly x: number; readonly y: number }[], reach: number): number[][] {
+  const group = spots.map((_, i) => i);
+  for (let a = 0; a < spots.length; a++) {
+    for (let b = a + 1; b < spots.length; b++) {
+      const d2 = (spots[a]!.x - spots[b]!.x) ** 2 + (spots[a]!.y - spots[b]!.y) ** 2;
+      if (d2 >= reach * reach || group[a] === group[b]) continue;
+      const [keep, drop] = [group[a]!, group[b]!];
+      for (let i = 0; i < group.length; i++) if (group[i] === drop) group[i] = keep;
+    }
+  }
+  const lists = new Map<number, number[]>();
+  group.forEach((g, i) => {
+    lists.set(g, [...(lists.get(g) ?? []), i]);
+  });
+  return [...lists.values()];
+}
+
+function peakAt(picture: Whitened, sign: 1 | -1, at: { readonly x: number; readonly y: number }): number {
+  return Math.max(1, sign * picture.z[Math.round(at.y) * picture.width + Math.round(at.x)]!);
 }
 
 /** Sub-pixel top of the parabolas through a maximum. */
