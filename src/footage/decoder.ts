@@ -27,6 +27,12 @@ export interface Decoder {
    * @throws DecoderFailure when the decoder itself fails; whatever the taker throws; Stopped
    */
   decode(recording: Recording, taker: PictureTaker, signal?: AbortSignalLike): Promise<void>;
+  /**
+   * Gives the pictures from the first one at or after a time on, as they are asked for; each is borrowed until the next
+   * is asked for. Meant for looking around, not for measuring: the way there costs up to one key frame interval.
+   * @throws DecoderFailure when the decoder itself fails
+   */
+  walk(recording: Recording, fromTicks: number): AsyncGenerator<DecodedPicture, void, undefined>;
   close(): void;
 }
 

@@ -3,8 +3,9 @@ import { InputError } from "../quantities/index.ts";
 import type { Bytes } from "./bytes.ts";
 import { sniffContainer } from "./container/sniff.ts";
 import type { Decoder } from "./decoder.ts";
-import type { Footage, FootageSettings } from "./footage.ts";
-import { type DecoderMaker, openRecording } from "./open.ts";
+import { DecoderChoice, type DecoderMaker } from "./decoder-choice.ts";
+import type { FootageSettings } from "./footage.ts";
+import type { Opened } from "./opened.ts";
 import { emptyFile, notAVideo } from "./refusals.ts";
 import { type DescribedTrack, describeTrack } from "./samples/describe.ts";
 import type { SampleSource } from "./samples/samples-decoder.ts";
@@ -27,7 +28,7 @@ export interface OpenableSource {
 }
 
 /** Tells what a file is by its content, describes it, and opens it with the best decoder that the settings allow. */
-export async function openSource(file: OpenableSource, settings: FootageSettings): Promise<Footage> {
+export async function openSource(file: OpenableSource, settings: FootageSettings): Promise<Opened> {
   const { name, bytes } = file;
   if (bytes.size === 0) throw emptyFile(name);
   const head = await bytes.read(0, 512);
@@ -45,7 +46,9 @@ export async function openSource(file: OpenableSource, settings: FootageSettings
   try {
     const described = kind === "iso-bmff" || kind === "matroska" ? await describe(input, file) : null;
     const recording = described?.recording ?? (await describeByProbe(probe, bytes, name, kind));
-    return await openRecording(recording, makers(file, described, settings), settings, close);
+    const only = settings.decoder === "auto" ? undefined : settings.decoder;
+    const choice = await DecoderChoice.among(recording, makers(file, described, settings), only);
+    return { recording, choice, settings, close };
   } catch (error) {
     close();
     throw error;

@@ -1,7 +1,7 @@
 import type { Appetite, Frame, Warning } from "../quantities/index.ts";
 import type { DecodedPicture, PictureTaker } from "./decoder.ts";
 import { fingerprint } from "./picture/fingerprint.ts";
-import { turnUpright } from "./picture/upright.ts";
+import { standUpright } from "./picture/upright.ts";
 import { type Recording, seconds } from "./recording.ts";
 import { sizeChanges } from "./refusals.ts";
 import { cutOff, framesMissing, framesRepeated, outOfOrder } from "./warnings.ts";
@@ -76,20 +76,13 @@ export class Reading implements PictureTaker {
     return this.sameAgain ? "more" : "enough";
   }
 
-  #frame({ width, height, luma }: DecodedPicture, ticks: number): Frame {
+  #frame(picture: DecodedPicture, ticks: number): Frame {
     const turn = this.recording.rotation_deg;
+    const { luma: coded, width, height } = picture;
     const t_s = seconds(this.recording, ticks) * this.timeFactor;
-    if (turn === 0) return { index: this.framesRead, t_s, width, height, luma };
-    if (this.#upright.length !== luma.length) this.#upright = new Uint8Array(luma.length);
-    turnUpright(luma, width, height, turn, this.#upright);
-    const lies = turn !== 180;
-    return {
-      index: this.framesRead,
-      t_s,
-      width: lies ? height : width,
-      height: lies ? width : height,
-      luma: this.#upright,
-    };
+    if (turn === 0) return { index: this.framesRead, t_s, width, height, luma: coded };
+    if (this.#upright.length !== coded.length) this.#upright = new Uint8Array(coded.length);
+    return { index: this.framesRead, t_s, ...standUpright(picture, turn, this.#upright) };
   }
 
   /** What was odd about the pass, once it is over. */

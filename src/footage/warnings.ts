@@ -41,5 +41,13 @@ export const cutOff = (decoded: number, expected: number | null, lost_s: number 
 
 export const decoderGaveUp = (decoder: string, frame: number, other: string): Warning => ({
   code: "decoder-changed",
-  message: `The decoder ${decoder} gave up at frame ${frame}; the whole recording was decoded with ${other}, which gave the same pictures up to there.`,
+  message:
+    decoder === other
+      ? `The decoder ${decoder} was interrupted at frame ${frame} and began anew; it gave the same pictures up to there.`
+      : `The decoder ${decoder} gave up at frame ${frame}; the whole recording was decoded with ${other}, which gave the same pictures up to there.`,
+});
+
+export const decodersDiffer = (decoder: string, frame: number, other: string): Warning => ({
+  code: "decoders-differ",
+  message: `The decoder ${decoder} gave up at frame ${frame}, and ${other} gives other pictures before it, so the recording is damaged. Only what came before was measured.`,
 });

@@ -2,6 +2,7 @@ import { type FileHandle, open } from "node:fs/promises";
 import { basename } from "node:path";
 import { FilePathSource } from "mediabunny";
 import type { Footage, FootageSettings } from "../footage.ts";
+import { footageOf } from "../footage-of.ts";
 import { openSource } from "../open-source.ts";
 import { noSuchFile, unreadableFile } from "../refusals.ts";
 import { loadCoreInNode } from "./core-in-node.ts";
@@ -19,7 +20,7 @@ export async function openInNode(path: string, settings: FootageSettings): Promi
   const name = basename(path);
   const handle = await openFile(path, name);
   const { size } = await handle.stat();
-  const footage = openSource(
+  const opened = openSource(
     {
       name,
       bytes: bytesOfFile(handle, size),
@@ -30,7 +31,7 @@ export async function openInNode(path: string, settings: FootageSettings): Promi
     },
     settings,
   );
-  return footage.finally(() => handle.close());
+  return footageOf(await opened.finally(() => handle.close()));
 }
 
 async function openFile(path: string, name: string): Promise<FileHandle> {

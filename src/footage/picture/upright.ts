@@ -1,5 +1,22 @@
 export type QuarterTurn = 0 | 90 | 180 | 270;
 
+/** A plane of luma without padding, row-major. */
+export interface Plane {
+  readonly width: number;
+  readonly height: number;
+  readonly luma: Uint8Array;
+}
+
+/**
+ * The picture turned clockwise until it stands upright.
+ * @param memory receives the upright luma, as many bytes as the picture has
+ */
+export function standUpright({ width, height, luma }: Plane, turn: QuarterTurn, memory: Uint8Array): Plane {
+  turnUpright(luma, width, height, turn, memory);
+  const lies = turn === 90 || turn === 270;
+  return { width: lies ? height : width, height: lies ? width : height, luma: memory };
+}
+
 /** Side of the square blocks in which a plane is turned: both the rows read and the rows written stay in cache. */
 const block = 32;
 

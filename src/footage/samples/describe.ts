@@ -9,17 +9,15 @@ import { type ContainerKind, containerName } from "../container/sniff.ts";
 import type { Recording } from "../recording.ts";
 import { nothingToRead, noVideoTrack } from "../refusals.ts";
 import { captureRateFromTags } from "../time/capture-rate-tag.ts";
-import { medianInterval } from "../time/intervals.ts";
+import { medianInterval, risingTimes } from "../time/intervals.ts";
 import { pixelsNotSquare, severalTracks, slowMotionMarks } from "../warnings.ts";
+import type { SampleSource } from "./samples-decoder.ts";
 
 /** A recording described through the demuxing library, and the track to decode. */
-export interface DescribedTrack {
+export interface DescribedTrack extends SampleSource {
   readonly recording: Recording;
-  readonly track: InputVideoTrack;
   /** Whether the demuxing library knows the codec; what it doesn't is for ffmpeg. */
   readonly decodable: boolean;
-  /** Turns a sample's timestamp (seconds) into ticks of the track's own clock, before any edit list. */
-  ticksOf(timestamp_s: number): number;
 }
 
 const noEdits: EditList = { edits: [], movieTimescale: 1, mediaTimescale: 1 };
@@ -68,6 +66,7 @@ export async function describeTrack(
     track,
     decodable: (await track.getCodec()) !== null,
     ticksOf,
+    timestampOf: (ticks) => ticks / ticksPerSecond + shift_s,
     recording: {
       name,
       kind,
@@ -105,7 +104,7 @@ async function packetTimes(
     times.push(ticks);
     end = Math.max(end, ticksOf(packet.timestamp + packet.duration));
   }
-  return { first: first ?? 0, ticks: Float64Array.from(times).sort(), end };
+  return { first: first ?? 0, ticks: risingTimes(times), end };
 }
 
 async function internalCodec(track: InputVideoTrack): Promise<string> {

@@ -1,6 +1,6 @@
 import { type InputVideoTrack, type VideoSample, VideoSampleSink } from "mediabunny";
 import { Stopped } from "../../quantities/index.ts";
-import { type Decoder, DecoderFailure, type PictureTaker } from "../decoder.ts";
+import { type DecodedPicture, type Decoder, DecoderFailure } from "../decoder.ts";
 import { LumaTightener } from "../picture/tight-luma.ts";
 
 /** Formats whose first plane is luma, and the depth of their samples. */
@@ -18,7 +18,9 @@ const lumaDepth: Readonly<Record<string, number>> = Object.fromEntries(
 /** What a decoder behind the demuxing library needs to know of its track. */
 export interface SampleSource {
   readonly track: InputVideoTrack;
+  /** Ticks of the track's own clock, before any edit list, of the library's time; and back. */
   ticksOf(timestamp_s: number): number;
+  timestampOf(ticks: number): number;
 }
 
 /**
@@ -31,8 +33,8 @@ export function samplesDecoder(name: string, source: SampleSource): Decoder {
   const tightener = new LumaTightener();
   let memory = new Uint8Array(0);
 
-  /** Copies the sample's planes; the taker gets the first one. */
-  async function hand(sample: VideoSample, ticks: number, taker: PictureTaker) {
+  /** Copies the sample's planes and gives the first one. */
+  async function picture(sample: VideoSample, ticks: number): Promise<DecodedPicture> {
     const bitDepth = sample.format === null ? undefined : lumaDepth[sample.format];
     if (bitDepth === undefined) throw new DecoderFailure(`the decoder gives ${sample.format ?? "no readable"} pixels`);
     const { width, height } = sample.visibleRect;
@@ -41,36 +43,39 @@ export function samplesDecoder(name: string, source: SampleSource): Decoder {
     const [plane] = await sample.copyTo(memory);
     if (plane === undefined) throw new DecoderFailure("the decoder gives no luma");
     const luma = tightener.tighten({ bytes: memory, ...plane, width, height, bitDepth });
-    return () => taker.take({ ticks, width, height, bitDepth, luma });
+    return { ticks, width, height, bitDepth, luma };
+  }
+
+  async function* pictures(from_s: number | undefined, wants: (ticks: number) => boolean) {
+    const samples = new VideoSampleSink(source.track, { hardwareAcceleration: "prefer-software" }).samples(from_s);
+    try {
+      for (;;) {
+        const next = await attempt(samples.next());
+        if (next.done) return;
+        const sample = next.value;
+        try {
+          const ticks = source.ticksOf(sample.timestamp);
+          if (wants(ticks)) yield await attempt(picture(sample, ticks));
+        } finally {
+          sample.close();
+        }
+      }
+    } finally {
+      await samples.return();
+    }
   }
 
   return {
     name,
     async decode(_recording, taker, signal) {
-      let open = 0;
-      const samples = new VideoSampleSink(source.track, { hardwareAcceleration: "prefer-software" }).samples();
-      try {
-        for (;;) {
-          const next = await attempt(samples.next());
-          if (next.done) break;
-          const sample = next.value;
-          open++;
-          try {
-            if (signal?.aborted) throw new Stopped();
-            const ticks = source.ticksOf(sample.timestamp);
-            if (!taker.wants(ticks)) continue;
-            const take = await attempt(hand(sample, ticks, taker));
-            if (take() === "enough") break;
-          } finally {
-            sample.close();
-            open--;
-          }
-        }
-      } finally {
-        await samples.return();
-      }
-      if (open !== 0) throw new Error(`${open} decoded frames were left open`);
+      const wants = (ticks: number) => {
+        if (signal?.aborted) throw new Stopped();
+        return taker.wants(ticks);
+      };
+      for await (const picture of pictures(undefined, wants)) if (taker.take(picture) === "enough") break;
     },
+    walk: ({ keeps }, fromTicks) =>
+      pictures(source.timestampOf(fromTicks), (ticks) => ticks >= fromTicks && keeps(ticks)),
     close() {},
   };
 }

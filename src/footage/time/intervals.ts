@@ -1,5 +1,12 @@
 import type { Warning } from "../../quantities/index.ts";
 
+/** Times in rising order, each once: pictures that are only there to decode others share the time of the next. */
+export function risingTimes(times: readonly number[]): Float64Array {
+  return Float64Array.from(times)
+    .sort()
+    .filter((time, i, sorted) => i === 0 || time !== sorted[i - 1]);
+}
+
 /** Middle value of the intervals between rising times, in their own unit; null with fewer than two times. */
 export function medianInterval(times: ArrayLike<number>): number | null {
   if (times.length < 2) return null;

@@ -3,7 +3,7 @@ import { riffCutShort } from "../container/riff-end.ts";
 import { type ContainerKind, containerName } from "../container/sniff.ts";
 import type { Recording } from "../recording.ts";
 import { nothingToRead, noVideoTrack } from "../refusals.ts";
-import { medianInterval } from "../time/intervals.ts";
+import { medianInterval, risingTimes } from "../time/intervals.ts";
 import { pixelsNotSquare } from "../warnings.ts";
 import type { Probe } from "./probe.ts";
 
@@ -24,7 +24,7 @@ export async function describeByProbe(
   const { tick, pixelAspect, packets } = found;
   const times = packets.map(({ pts, dts }) => pts ?? dts).filter((time) => time !== undefined);
   if (times.length === 0) throw nothingToRead(name, cutShort);
-  const ticks = Float64Array.from(times).sort();
+  const ticks = risingTimes(times);
   const interval = medianInterval(ticks);
   const length = ticks.at(-1)! - ticks[0]! + (interval ?? 0);
   return {

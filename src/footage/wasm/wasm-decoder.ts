@@ -1,12 +1,16 @@
 import { type AbortSignalLike, Stopped } from "../../quantities/index.ts";
-import { type Decoder, DecoderFailure, type PictureTaker } from "../decoder.ts";
+import { type DecodedPicture, type Decoder, DecoderFailure, type PictureTaker } from "../decoder.ts";
 import type { Recording } from "../recording.ts";
 import { type CoreLoader, coreName, type MountableFile } from "./core.ts";
+import { CoreClock } from "./core-clock.ts";
 import { lumaGraph } from "./luma-filter.ts";
 import { PictureAssembler } from "./picture-assembler.ts";
 import { PictureLog } from "./picture-log.ts";
 import { type Probe, probeRecording } from "./probe.ts";
 import { inputPath, picturesPath, runFfmpeg } from "./run-core.ts";
+
+/** Luma that `walk` decodes at a time, since the core can't be halted between pictures. */
+const window_bytes = 48e6;
 
 /**
  * Decodes with ffmpeg compiled to WebAssembly. The recording is read in pieces and luma streams out picture by picture,
@@ -22,39 +26,66 @@ export function wasmDecoder(load: CoreLoader, file: MountableFile): Decoder {
     return probed;
   }
 
+  /** @param fromTicks time to seek to, a key picture at or before it; null to begin at the beginning */
+  async function run(recording: Recording, taker: PictureTaker, fromTicks: number | null): Promise<void> {
+    const found = await probe(recording);
+    const clock = new CoreClock(recording, found);
+    const log = new PictureLog();
+    const pictures = new PictureAssembler(log, (pts) => clock.ticksOf(pts, log.clock), taker);
+    const code = await runFfmpeg(
+      load,
+      file,
+      argumentsFor(recording, found.pixelFormat, fromTicks === null ? null : clock.coreTime_s(fromTicks)),
+      (bytes) => pictures.take(bytes),
+      (line) => log.read(line),
+    );
+    if (pictures.thrown !== null) throw pictures.thrown.error;
+    if (code !== 0 && !pictures.enough) throw new DecoderFailure(`ffmpeg ended with code ${code}`);
+  }
+
+  /** Copies of the pictures from a time on, as many as make up a window. */
+  async function windowFrom(recording: Recording, fromTicks: number, seek: boolean): Promise<DecodedPicture[]> {
+    const window: DecodedPicture[] = [];
+    let bytes = 0;
+    await run(
+      recording,
+      {
+        wants: (ticks) => ticks >= fromTicks && recording.keeps(ticks),
+        take(picture) {
+          window.push({ ...picture, luma: picture.luma.slice() });
+          bytes += picture.luma.length;
+          return bytes < window_bytes ? "more" : "enough";
+        },
+      },
+      seek ? fromTicks : null,
+    );
+    return window;
+  }
+
   return {
     name: coreName,
-    async decode(recording, taker, signal) {
-      const { pixelFormat, packets, tick } = await probe(recording);
-      const log = new PictureLog();
-      // The core's clock may start elsewhere than ours (times shifted to make them rise); the first packet tells.
-      const perTick = (tick.numerator * recording.tick.denominator) / (tick.denominator * recording.tick.numerator);
-      const first = packets[0]?.pts ?? packets[0]?.dts;
-      const shift = first === undefined ? 0 : recording.firstPacketTicks - Math.round(first * perTick);
-      const ticksOf = (pts: number) => {
-        const { numerator, denominator } = log.clock;
-        const ours = (pts * numerator * recording.tick.denominator) / (denominator * recording.tick.numerator);
-        return Math.round(ours) + shift;
-      };
-      const pictures = new PictureAssembler(log, ticksOf, stoppable(taker, signal));
-      const code = await runFfmpeg(
-        load,
-        file,
-        argumentsFor(recording, pixelFormat),
-        (bytes) => pictures.take(bytes),
-        (line) => log.read(line),
-      );
-      if (pictures.thrown !== null) throw pictures.thrown.error;
-      if (code !== 0 && !pictures.enough) throw new DecoderFailure(`ffmpeg ended with code ${code}`);
+    decode: (recording, taker, signal) => run(recording, stoppable(taker, signal), null),
+    async *walk(recording, fromTicks) {
+      const { ticks } = recording;
+      for (let next = ticks.find((time) => time >= fromTicks); next !== undefined; ) {
+        let window = next > ticks[0]! ? await windowFrom(recording, next, true) : [];
+        // Not every container seeks well: what was overshot is reached from the beginning.
+        if (window[0]?.ticks !== next) window = await windowFrom(recording, next, false);
+        yield* window;
+        const last = window.at(-1);
+        if (last === undefined) return;
+        next = ticks.find((time) => time > last.ticks);
+      }
     },
     close() {},
   };
 }
 
-function argumentsFor({ kind, track }: Recording, pixelFormat: string): string[] {
+function argumentsFor({ kind, track }: Recording, pixelFormat: string, seekTo_s: number | null): string[] {
   return [
     ...["-v", "info", "-hide_banner", "-nostats", "-noautorotate", "-copyts"],
     ...(kind === "iso-bmff" ? ["-ignore_editlist", "1"] : []),
+    ...(seekTo_s === null ? [] : ["-seek_timestamp", "1", "-noaccurate_seek", "-ss", seekTo_s.toFixed(6)]),
     ...["-i", inputPath, "-map", `0:V:${track}`, "-an", "-sn", "-dn", "-fps_mode", "passthrough"],
     ...["-vf", `${lumaGraph(pixelFormat)},showinfo=checksum=0`, "-f", "rawvideo", picturesPath],
   ];
