@@ -57,48 +57,52 @@ export function Bench({ describe, ...head }: BenchProps) {
         />
       </main>
       <aside className="side" aria-label="Trial">
-        <div className="upper">
-          <TrialHead {...head} />
-          <Tabs
-            label="About the trial"
-            tabs={[
-              {
-                name: "Findings",
-                content: measured ? (
-                  <FindingsPanel
+        <TrialHead {...head} />
+        <Tabs
+          label="About the trial"
+          tabs={[
+            {
+              name: "Findings",
+              content: measured ? (
+                <FindingsPanel
+                  measured={measured}
+                  findings={findings}
+                  chosen={view.evidence}
+                  cell={view.cell}
+                  dispatch={dispatch}
+                />
+              ) : (
+                <NotMeasured warnings={head.trial.warnings} />
+              ),
+              below: measured && measured.paths.count > 0 && (
+                <section className="cells-section" aria-label="Cells">
+                  <CellsBar
+                    all={measured.paths.count}
+                    shown={evidence?.length ?? null}
+                    showAll={() => dispatch({ type: "evidence put away" })}
+                  />
+                  <CellsTable
                     measured={measured}
-                    findings={findings}
-                    chosen={view.evidence}
+                    sort={view.sort}
                     cell={view.cell}
+                    only={evidence}
                     dispatch={dispatch}
                   />
-                ) : (
-                  <NotMeasured warnings={head.trial.warnings} />
-                ),
-              },
-              {
-                name: "Footage",
-                note: measured ? checksNote(measured.quality) : undefined,
-                content: measured ? <FootagePanel measured={measured} /> : <p>Measuring checks the footage too.</p>,
-              },
-              {
-                name: "Scale",
-                content: <ScalePanel description={description} measured={measured} describe={describe} />,
-              },
-              { name: "Field", content: <FieldPanel field={description.field} /> },
-            ]}
-          />
-        </div>
-        {measured && measured.paths.count > 0 && (
-          <section className="lower" aria-label="Cells">
-            <CellsBar
-              all={measured.paths.count}
-              shown={evidence?.length ?? null}
-              showAll={() => dispatch({ type: "evidence put away" })}
-            />
-            <CellsTable measured={measured} sort={view.sort} cell={view.cell} only={evidence} dispatch={dispatch} />
-          </section>
-        )}
+                </section>
+              ),
+            },
+            {
+              name: "Footage",
+              note: measured ? checksNote(measured.quality) : undefined,
+              content: measured ? <FootagePanel measured={measured} /> : <p>Measuring checks the footage too.</p>,
+            },
+            {
+              name: "Scale",
+              content: <ScalePanel description={description} measured={measured} describe={describe} />,
+            },
+            { name: "Field", content: <FieldPanel field={description.field} /> },
+          ]}
+        />
       </aside>
     </div>
   );

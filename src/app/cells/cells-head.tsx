@@ -13,7 +13,7 @@ export function CellsHead({ sort, unit, dispatch }: CellsHeadProps) {
   const columns: readonly [by: CellColumn, title: string, unit: string][] = [
     ["cell", "Cell", ""],
     ["from", "From", "s"],
-    ["followed", "Followed", "s"],
+    ["followed", "For", "s"],
     ["speed", "Speed", unit],
     ["straightness", "Straight", ""],
     ["motile", "Swims", ""],

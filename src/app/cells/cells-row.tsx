@@ -1,5 +1,4 @@
 import type { Cell } from "../../quantities/index.ts";
-import { readable, readableAlone } from "../../report/index.ts";
 import { followed_s } from "./cell-rows.ts";
 
 interface CellsRowProps {
@@ -40,9 +39,9 @@ export function CellsRow({ cell, factor, position, chosen, choose }: CellsRowPro
   );
 }
 
-function speedText({ speed_px_s, speedSe_px_s }: Cell, factor: number): string {
+/** Speed and its standard error to one decimal, so that the column can be read down. */
+export function speedText({ speed_px_s, speedSe_px_s }: Cell, factor: number): string {
   if (speed_px_s === null) return "";
-  if (!speedSe_px_s) return readableAlone(speed_px_s * factor);
-  const se = speedSe_px_s * factor;
-  return `${readable(speed_px_s * factor, se)} ± ${readable(se, se)}`;
+  const speed = (speed_px_s * factor).toFixed(1);
+  return speedSe_px_s === null ? speed : `${speed} ± ${(speedSe_px_s * factor).toFixed(1)}`;
 }

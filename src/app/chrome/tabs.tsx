@@ -6,6 +6,8 @@ export interface Tab {
   /** A short word beside the name: `1 poor`. */
   readonly note?: string | undefined;
   readonly content: ReactNode;
+  /** What stays in sight below the panel while this tab is chosen. */
+  readonly below?: ReactNode;
 }
 
 /** Tabs over one panel. Arrow keys, Home and End go from tab to tab. */
@@ -44,6 +46,7 @@ export function Tabs({ label, tabs }: { label: string; tabs: readonly Tab[] }) {
       <div className="tab-panel" role="tabpanel" id={`${id}-panel`} aria-labelledby={`${id}-${chosen}`} tabIndex={0}>
         {tabs[chosen]!.content}
       </div>
+      {tabs[chosen]!.below}
     </div>
   );
 }

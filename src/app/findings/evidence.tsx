@@ -1,4 +1,4 @@
-import { type Dispatch, useMemo } from "react";
+import { type Dispatch, useEffect, useMemo, useRef } from "react";
 import type { MeasuredTrial } from "../../quantities/index.ts";
 import { Needle } from "../chrome/needle.tsx";
 import type { ViewingAction } from "../state/viewing.ts";
@@ -13,8 +13,18 @@ interface EvidenceProps {
   readonly dispatch: Dispatch<ViewingAction>;
 }
 
-/** What a finding rests on, drawn. */
-export function Evidence({ finding, measured, cell, dispatch }: EvidenceProps) {
+/** What a finding rests on, drawn, and scrolled into sight. */
+export function Evidence(props: EvidenceProps) {
+  const box = useRef<HTMLDivElement>(null);
+  useEffect(() => box.current?.scrollIntoView({ block: "nearest" }), []);
+  return (
+    <div ref={box}>
+      <Drawn {...props} />
+    </div>
+  );
+}
+
+function Drawn({ finding, measured, cell, dispatch }: EvidenceProps) {
   const { speed, scale, drift } = measured;
   const speeds = useMemo(() => {
     const { factor } = speedUnit(measured);

@@ -93,8 +93,9 @@ function drawChosen(
   const before = pointsOf(measured, view, frame, first, split - 1);
   const after = pointsOf(measured, view, frame, Math.max(first, split - 1), end - 1);
   pen.lineCap = "round";
-  for (const points of [before, after]) stroke(pen, points, "rgb(8 12 16 / 0.8)", 5.5, []);
-  stroke(pen, after, "rgb(255 255 255 / 0.75)", 1.4, [2, 5]);
+  stroke(pen, after, "rgb(8 12 16 / 0.55)", 3, []);
+  stroke(pen, after, "#ffffff", 1.2, [1.5, 4]);
+  stroke(pen, before, "rgb(8 12 16 / 0.85)", 5, []);
   stroke(pen, before, "#ffffff", 2.4, []);
   if (kindOf(measured, p) === "motile") drawHead(pen, before, "#ffffff");
 }

@@ -1,8 +1,9 @@
 import { type Dispatch, useCallback, useMemo } from "react";
 import type { MeasuredTrial } from "../../quantities/index.ts";
 import type { Viewing, ViewingAction } from "../state/viewing.ts";
+import { drawLabel } from "./draw-label.ts";
 import { drawPaths } from "./draw-paths.ts";
-import { drawSightings } from "./draw-sightings.ts";
+import { drawSightings, pathOfSightings } from "./draw-sightings.ts";
 import "./footage-stage.css";
 import { greyCanvas } from "./grey-canvas.ts";
 import { pathNear, sightingsAt } from "./rows-at.ts";
@@ -42,6 +43,10 @@ export function FootageStage({ pictures, measured, view, lit, dispatch }: Footag
       problem && measured ? greyCanvas(measured.view.width, measured.view.height, measured.view.background) : null,
     [problem, measured],
   );
+  const pathOf = useMemo(
+    () => (measured ? pathOfSightings(measured.paths, measured.sightings.count) : null),
+    [measured],
+  );
   const image = picture?.bitmap ?? background;
   const frame = picture?.frame ?? view.frame;
 
@@ -56,11 +61,12 @@ export function FootageStage({ pictures, measured, view, lit, dispatch }: Footag
   );
   const paintFindings = useCallback(
     (pen: CanvasRenderingContext2D) => {
-      if (!measured || !image) return;
+      if (!measured || !pathOf || !image) return;
       if (view.paths) drawPaths(pen, measured, transform, { frame, tail_s: view.tail_s, cell: view.cell, lit });
-      if (view.sightings) drawSightings(pen, measured, transform, frame);
+      if (view.sightings) drawSightings(pen, measured, transform, { frame, lit, pathOf });
+      if (view.cell !== null) drawLabel(pen, measured, transform, frame, view.cell);
     },
-    [measured, image, transform, frame, lit, view.paths, view.tail_s, view.cell, view.sightings],
+    [measured, pathOf, image, transform, frame, lit, view.paths, view.tail_s, view.cell, view.sightings],
   );
   const pictureCanvas = useCanvas(size, paintPicture);
   const findingsCanvas = useCanvas(size, paintFindings);

@@ -38,7 +38,7 @@ export const FieldLane = memo(function FieldLane({ field, x, end_s, height }: Fi
       {reversals.map((t_s) => (
         <g key={t_s} className="reversal" transform={`translate(${x(t_s)} 0)`}>
           <title>The field reverses at {t_s} s</title>
-          <line y1={0} y2={height + 22} />
+          <line y1={16} y2={height + 22} />
           <path d="M-6 3H4M1 0L5 3L1 6M6 11H-4M-1 8L-5 11L-1 14" />
         </g>
       ))}

@@ -67,8 +67,8 @@ export const TimeRibbon = memo(function TimeRibbon({ times_s, frame, field, coun
           {counts && <CountLine counts={counts} times_s={times_s} x={x} top={fieldHeight} height={countHeight} />}
           {field?.from === "steps" && <FieldLane field={field} x={x} end_s={end_s} height={fieldHeight} />}
           <g className="playhead" transform={`translate(${x(t_s)} 0)`}>
-            <line y1={0} y2={height - 16} />
-            <path d={`M-5 ${height - 10}L0 ${height - 17}L5 ${height - 10}z`} />
+            <line y1={0} y2={height - 18} />
+            <path d={`M-4.5 ${height - 14}L0 ${height - 20}L4.5 ${height - 14}z`} />
           </g>
         </svg>
       </div>

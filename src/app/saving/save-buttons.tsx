@@ -47,7 +47,7 @@ export function SaveButtons({ measured, name, saved, failed }: SaveButtonsProps)
       </button>
       {window.showDirectoryPicker && (
         <button type="button" onClick={() => attempt(folder)}>
-          Save into a folder …
+          Into a folder …
         </button>
       )}
       <output className="said">{said}</output>

@@ -16,7 +16,7 @@ export function FootagePanel({ measured }: { measured: MeasuredTrial }) {
               {asWords(check.check)}
               {check.figure !== null && (
                 <span>
-                  {readableAlone(check.figure)} {check.unit}
+                  {readableAlone(Number(check.figure.toPrecision(3)))} {check.unit}
                 </span>
               )}
             </h3>

@@ -1,7 +1,7 @@
 import { type Dispatch, useEffect, useRef } from "react";
 import { version } from "../../../package.json";
-import { type Run, startMeasuring, timeLeft } from "../../../workers/index.ts";
-import { type MeasuredTrial, Stopped } from "../../quantities/index.ts";
+import { type Run, startMeasuring } from "../../../workers/index.ts";
+import { type MeasuredTrial, Stopped, timeLeft } from "../../quantities/index.ts";
 import { problemOf } from "./problem.ts";
 import type { WorkbenchAction } from "./workbench-reducer.ts";
 import { type OpenTrial, titleOf } from "./workbench-state.ts";
