@@ -3,6 +3,7 @@ import { footageOf } from "../footage-of.ts";
 import { openSource } from "../open-source.ts";
 import { sourceOfFile } from "./source-of-file.ts";
 
+export type { Footage, FootageFacts, FootageSettings, ReadReport } from "../footage.ts";
 export type { Picture, Pictures } from "../pictures.ts";
 export { openPictures } from "./pictures.ts";
 
