@@ -1,6 +1,7 @@
 import { useCallback, useEffect, useReducer } from "react";
 import { Bench } from "./bench/bench.tsx";
 import { Announcer } from "./chrome/announcer.tsx";
+import { Catcher } from "./chrome/catcher.tsx";
 import { Needle } from "./chrome/needle.tsx";
 import { ProblemNote } from "./chrome/problem-note.tsx";
 import { demoTrial } from "./opening/demo.ts";
@@ -61,21 +62,22 @@ export function Workbench() {
           <TrialList trials={state.trials} chosen={state.chosen} dispatch={dispatch} />
         )}
         {trial ? (
-          <Bench
-            key={trial.id}
-            trial={trial}
-            measure={() => dispatch({ type: "measure", ids: [trial.id] })}
-            stop={() => stop(trial.id)}
-            close={() => {
-              const lost = trial.measured && !trial.saved;
-              if (lost && !window.confirm(`The results of ${titleOf(trial)} are not saved. Close it all the same?`))
-                return;
-              dispatch({ type: "closed", id: trial.id });
-            }}
-            describe={(description) => dispatch({ type: "described", id: trial.id, description })}
-            saved={() => dispatch({ type: "saved", id: trial.id })}
-            failedToSave={(problem) => dispatch({ type: "went wrong", problem })}
-          />
+          <Catcher key={trial.id}>
+            <Bench
+              trial={trial}
+              measure={() => dispatch({ type: "measure", ids: [trial.id] })}
+              stop={() => stop(trial.id)}
+              close={() => {
+                const lost = trial.measured && !trial.saved;
+                if (lost && !window.confirm(`The results of ${titleOf(trial)} are not saved. Close it all the same?`))
+                  return;
+                dispatch({ type: "closed", id: trial.id });
+              }}
+              describe={(description) => dispatch({ type: "described", id: trial.id, description })}
+              saved={() => dispatch({ type: "saved", id: trial.id })}
+              failedToSave={(problem) => dispatch({ type: "went wrong", problem })}
+            />
+          </Catcher>
         ) : (
           <Welcome open={open} openDemo={openDemo} />
         )}

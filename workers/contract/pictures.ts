@@ -15,9 +15,10 @@ export interface OpenedPictures {
   readonly decoder: string;
 }
 
-/** What a pictures worker says. `bitmap` belongs to the receiver, who closes it. */
+/** What a pictures worker says. `bitmap` belongs to the receiver, who closes it; it is null when the frame can't
+ * be decoded. */
 export type PicturesNews =
   | Ready
   | { readonly type: "opened"; readonly pictures: OpenedPictures }
-  | { readonly type: "shown"; readonly frame: number; readonly bitmap: ImageBitmap }
+  | { readonly type: "shown"; readonly frame: number; readonly bitmap: ImageBitmap | null }
   | { readonly type: "failed"; readonly failure: Failure };

@@ -5,8 +5,11 @@ import { LatestWanted } from "./latest-wanted.ts";
 /** Who hears of a recording's pictures. */
 export interface PicturesListener {
   opened(pictures: OpenedPictures): void;
-  /** A picture that was asked for, or a later one when asking was quicker than decoding. The receiver closes it. */
-  shown(frame: number, bitmap: ImageBitmap): void;
+  /**
+   * A picture that was asked for, or a later one when asking was quicker than decoding. The
+   * receiver closes it; it is null when the frame can't be decoded.
+   */
+  shown(frame: number, bitmap: ImageBitmap | null): void;
   failed(error: Error): void;
 }
 
@@ -34,7 +37,7 @@ export function openPictures(recording: File, captureFps: number | null, listene
   };
   worker.onmessage = ({ data }: MessageEvent<PicturesNews>) => {
     if (closed) {
-      if (data.type === "shown") data.bitmap.close();
+      if (data.type === "shown") data.bitmap?.close();
       return;
     }
     if (data.type === "ready") send({ type: "open", recording, captureFps });

@@ -10,7 +10,7 @@ export function CellsBar({ all, shown, showAll }: CellsBarProps) {
   return (
     <header>
       <h2>Cells</h2>
-      <p>{shown === null ? `all ${all}` : `${shown} of ${all}, those behind the finding`}</p>
+      <p>{shown === null ? `all ${all}` : `${shown} of ${all} behind the finding`}</p>
       {shown !== null && (
         <button type="button" className="quiet" onClick={showAll} title="Show all cells (Esc)">
           Show all

@@ -9,6 +9,7 @@ const shapes = {
   start: "M4 3v10M12 3L7 8l5 5",
   end: "M12 3v10M4 3l5 5-5 5",
   close: "M4 4l8 8M12 4l-8 8",
+  again: "M13 8a5 5 0 1 1-1.5-3.6M13 2v3h-3",
   folder: "M2 4h4l2 2h6v7H2z",
   film: "M2 3h12v10H2zM5 3v10M11 3v10",
   save: "M8 2v8M4.5 7L8 10.5 11.5 7M3 13.5h10",

@@ -16,7 +16,9 @@ interface EvidenceProps {
 /** What a finding rests on, drawn, and scrolled into sight. */
 export function Evidence(props: EvidenceProps) {
   const box = useRef<HTMLDivElement>(null);
-  useEffect(() => box.current?.scrollIntoView({ block: "nearest" }), []);
+  useEffect(() => {
+    box.current?.scrollIntoView({ block: "nearest" });
+  }, []);
   return (
     <div ref={box}>
       <Drawn {...props} />
@@ -35,6 +37,7 @@ function Drawn({ finding, measured, cell, dispatch }: EvidenceProps) {
   }, [finding, measured]);
   if (finding.name === "share" && speed) return <ShareBar speed={speed} />;
   if (finding.name === "flow" && drift) {
+    if (finding.figure === "No flow") return null;
     const [vx, vy] = drift.velocity_px_s;
     return (
       <p className="flow-needle">

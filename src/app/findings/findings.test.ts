@@ -46,6 +46,17 @@ describe("findingsOf", () => {
     );
   });
 
+  it("doesn't name a direction when the flow can't be told from none", () => {
+    const drift = {
+      ...measured.drift!,
+      velocity_px_s: [0.1, -0.2] as const,
+      ci95_px_s: [[-0.5, 0.7] as const, [-0.9, 0.5] as const] as const,
+    };
+    expect(sentence(finding({ ...measured, drift }, "flow"))).toMatch(
+      /^No flow of the fluid can be told from none, in µm/,
+    );
+  });
+
   it("says plainly that nothing swims", () => {
     const still = nothingSwims();
     expect(sentence(finding(still, "speed"))).toMatch(/^No cell swims: none moves more/);

@@ -115,6 +115,7 @@ function flowFinding(measured: MeasuredTrial): Finding[] {
   const { drift } = measured;
   if (!drift) return [];
   const { unit, factor } = speedUnit(measured);
+  const still = drift.ci95_px_s.every(([low, high]) => low <= 0 && high >= 0);
   const diffusing = drift.from === "diffusing cells";
   const component = (axis: 0 | 1, name: string) => {
     const [low, high] = drift.ci95_px_s[axis];
@@ -129,9 +130,9 @@ function flowFinding(measured: MeasuredTrial): Finding[] {
   return [
     {
       name: "flow",
-      before: "The fluid flows at ",
-      figure: `${speed} ${unit}`,
-      after: ` ${towards(angle)}: ${component(0, "rightwards")}, ${component(1, "upwards")}`,
+      before: still ? "" : "The fluid flows at ",
+      figure: still ? "No flow" : `${speed} ${unit}`,
+      after: `${still ? ` of the fluid can be told from none, in ${unit}` : ` ${towards(angle)}`}: ${component(0, "rightwards")}, ${component(1, "upwards")}`,
       behind: many(
         drift.n_cells,
         diffusing ? "cell that only diffuses" : "swimmer that turns",

@@ -22,7 +22,7 @@ export function SpeedSwarm({ speeds, mean, unit, cell, choose }: SpeedSwarmProps
   const [ref, { width }] = useSize<HTMLDivElement>();
   const { x, radius, dots } = useMemo(() => {
     const most = Math.max(...speeds.map((it) => it.speed), mean?.ci95[1] ?? 0, 1e-9);
-    const x = scaleLinear([0, most], [8, Math.max(60, width - 10)]).nice(6);
+    const x = scaleLinear([0, most], [8, Math.max(60, width - 18)]).nice(6);
     const along = speeds.map((it) => x(it.speed));
     return { x, ...fittingSwarm(along, [5, 4, 3.2, 2.5, 2, 1.5, 1], room) };
   }, [speeds, mean, width]);

@@ -5,7 +5,8 @@ import { type Problem, problemOf } from "../state/problem.ts";
 /** A decoded frame on show. */
 export interface Picture {
   readonly frame: number;
-  readonly bitmap: ImageBitmap;
+  /** Null when the frame can't be decoded. */
+  readonly bitmap: ImageBitmap | null;
 }
 
 /** A recording being looked at. */
@@ -27,7 +28,7 @@ export function usePictures(recording: File, captureFps: number | null, frame: n
 
   const show = useCallback((next: Picture | null) => {
     setPicture((last) => {
-      if (last !== next) last?.bitmap.close();
+      if (last !== next) last?.bitmap?.close();
       return next;
     });
   }, []);
@@ -50,7 +51,9 @@ export function usePictures(recording: File, captureFps: number | null, frame: n
 
   // Asked again when the recording is another one: `opened` is a new object then.
   // biome-ignore lint/correctness/useExhaustiveDependencies: see above
-  useEffect(() => worker.current?.show(frame), [frame, opened]);
+  useEffect(() => {
+    worker.current?.show(frame);
+  }, [frame, opened]);
 
   return { opened, picture, problem };
 }

@@ -38,11 +38,18 @@ export function TrialHead({ trial, measure, stop, close, saved, failedToSave }: 
         <WorkLine work={trial.work} stop={stop} />
       ) : (
         <div className="actions">
-          <button type="button" className={trial.measured && !isOutdated(trial) ? "" : "first"} onClick={measure}>
-            {trial.measured ? "Measure again" : "Measure"}
-          </button>
+          {(!trial.measured || isOutdated(trial)) && (
+            <button type="button" className="first" onClick={measure}>
+              {trial.measured ? "Measure again" : "Measure"}
+            </button>
+          )}
           {trial.measured && (
             <SaveButtons measured={trial.measured} name={titleOf(trial)} saved={saved} failed={failedToSave} />
+          )}
+          {trial.measured && !isOutdated(trial) && (
+            <button type="button" className="quiet" aria-label="Measure again" title="Measure again" onClick={measure}>
+              <Icon name="again" />
+            </button>
           )}
         </div>
       )}
