@@ -22,6 +22,11 @@ const leastNoise = 0.6;
 const tile = 40;
 /** What steadying leaves unsteadied, pixels: adds noise in proportion to the still layer's gradient. */
 const unsteady_px = 0.08;
+/**
+ * Where there is something to draw, an encoder draws it a little differently every time: noise there is above that of the
+ * tile, by what the pixels around show but by no more than this, grey levels. More is a cell that lingers.
+ */
+const mostRedrawn = 1.5;
 /** Where the still layer changes by more than this from pixel to pixel, grey levels, noise isn't read off. */
 const steepSlope = 4;
 /** Below this level nothing is lit, and nothing is learnt about noise. */
@@ -84,6 +89,8 @@ function noiseMap(spread: Float32Array, level: Float32Array, width: number, heig
     }
   }
   const out = new Float32Array(spread.length);
+  const variance = spread.map((v) => (v / spreadOfNormal) ** 2);
+  const around = boxMean(variance, width, height, 3);
   for (let y = 0; y < height; y++) {
     const gy = clampTo(((y + 0.5) * rows) / height - 0.5, rows);
     for (let x = 0; x < width; x++) {
@@ -97,7 +104,8 @@ function noiseMap(spread: Float32Array, level: Float32Array, width: number, heig
       const dx = x > 0 && x < width - 1 ? (level[i + 1]! - level[i - 1]!) / 2 : 0;
       const dy = y > 0 && y < height - 1 ? (level[i + width]! - level[i - width]!) / 2 : 0;
       const edge = Math.max(0, Math.sqrt(dx * dx + dy * dy) - base) * unsteady_px;
-      out[i] = Math.sqrt(base * base + edge * edge);
+      const redrawn = Math.min(Math.max(0, around[i]! - base * base), mostRedrawn ** 2);
+      out[i] = Math.sqrt(base * base + edge * edge + redrawn);
     }
   }
   return out;

@@ -38,7 +38,7 @@ export interface Placed {
 
 /**
  * Finds the size and polarity of the cells: the matched filter gives the highest signal over noise at the spot's own
- * size (T. Lindeberg 1998 on scale selection, with the noise-normalised response in place of a derivative). Returns what
+ * size (T. Lindeberg 1998, Int. J. Comput. Vis. 30, 79, on scale selection; filters have unit energy). Returns what
  * was found for either polarity, the likelier first.
  *
  * @param fine full-size, `coarse` half-size whitener; sizes from 2.8 px on are looked at on the coarse one.
@@ -55,7 +55,9 @@ export function findSpotKinds(fine: Whitener, coarse: Whitener, samples: readonl
       const filtered = on.filter(gaussianTaps(sigma / on.bin));
       const sd = on.filteredSd();
       for (const sign of [1, -1] as const) {
-        for (const i of on.peaks(sign, sure * sd)) responses.get(`${sign} ${sigma}`)!.push((sign * filtered[i]!) / sd);
+        // Compared as they are, not over the noise of their size: noise that an encoder has smoothed away at the finest
+        // size would make that size win whatever cells look like.
+        for (const i of on.peaks(sign, sure * sd)) responses.get(`${sign} ${sigma}`)!.push(sign * filtered[i]!);
       }
     }
   }

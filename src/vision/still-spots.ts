@@ -14,8 +14,15 @@ const visible = 5;
 const leastWander_px = 0.3;
 /** Wandering less than this is left to imperfect steadying. Pixels. */
 const tremble_px = 0.08;
-/** Variance over what noise explains, averaged over a spot, below which nothing moves there. */
+/** Variance over that of noise, averaged over a spot, below which nothing moves there. */
 const calmRatio = 1.5;
+/**
+ * A spot that wanders less than this isn't told from one that lies still, pixels: steadying leaves a little, and an encoder
+ * draws the same debris anew with every key frame, never quite the same.
+ */
+const leastDrift_px = 0.35;
+/** Spread that an encoder's redrawing of the same thing makes, grey levels. */
+const redrawn = 2;
 /** Von Neumann ratio below which a sequence of positions is no white noise (expected 2, standard deviation about 0.25). */
 const walkRatio = 1.15;
 
@@ -69,15 +76,23 @@ export function fillLively(
   reach: number,
 ): Float32Array {
   const { level, noise, own } = still;
+  const excess = new Float32Array(level.length);
+  for (let y = 1; y < height - 1; y++) {
+    for (let x = 1; x < width - 1; x++) {
+      const i = y * width + x;
+      const dx = (level[i + 1]! - level[i - 1]!) / 2;
+      const dy = (level[i + width]! - level[i - width]!) / 2;
+      const bound = (2.2 * noise[i]!) ** 2 + 0.09 * (dx * dx + dy * dy) + redrawn ** 2;
+      excess[i] = inView[i] === 0 ? -bound : own[i]! * own[i]! - bound;
+    }
+  }
+  // A cell is wider than a pixel; a single lively pixel is the encoder's.
+  const around = boxMean(excess, width, height, 1);
   const lively = new Uint8Array(level.length);
   for (let y = 1; y < height - 1; y++) {
     for (let x = 1; x < width - 1; x++) {
       const i = y * width + x;
-      if (inView[i] === 0) continue;
-      const dx = (level[i + 1]! - level[i - 1]!) / 2;
-      const dy = (level[i + width]! - level[i - width]!) / 2;
-      const bound = (2.2 * noise[i]!) ** 2 + 0.09 * (dx * dx + dy * dy);
-      if (own[i]! * own[i]! > bound) for (const j of [i, i - 1, i + 1, i - width, i + width]) lively[j] = 1;
+      if (around[i]! > 0) for (const j of [i, i - 1, i + 1, i - width, i + width]) lively[j] = 1;
     }
   }
   const usable = lively.map((v, i) => (v === 0 && inView[i] === 1 ? 1 : 0));
@@ -135,10 +150,10 @@ function calm(still: Background, width: number, height: number, x: number, y: nu
       const dx = (level[k + 1]! - level[k - 1]!) / 2;
       const dy = (level[k + width]! - level[k - width]!) / 2;
       spread += own[k]! * own[k]!;
-      explained += noise[k]! * noise[k]! + tremble_px * tremble_px * (dx * dx + dy * dy);
+      explained += calmRatio * noise[k]! * noise[k]! + leastDrift_px * leastDrift_px * (dx * dx + dy * dy);
     }
   }
-  return spread < calmRatio * explained;
+  return spread < explained;
 }
 
 /** Does the spot at (x, y) move, or come and go, over the samples? */
