@@ -53,7 +53,7 @@ describe("findingsOf", () => {
       ci95_px_s: [[-0.5, 0.7] as const, [-0.9, 0.5] as const] as const,
     };
     expect(sentence(finding({ ...measured, drift }, "flow"))).toMatch(
-      /^No flow of the fluid can be told from none, in µm/,
+      /^No flow is seen: rightwards 0\.05 µm\/s \(95 % between −0\.25 and 0\.35\), upwards/,
     );
   });
 

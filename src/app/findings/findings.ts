@@ -121,7 +121,8 @@ function flowFinding(measured: MeasuredTrial): Finding[] {
     const [low, high] = drift.ci95_px_s[axis];
     const ci95: Interval = [low * factor, high * factor];
     const half = (ci95[1] - ci95[0]) / 2;
-    return `${name} ${readable(drift.velocity_px_s[axis] * factor, half)} (95 % between ${between(ci95, half)})`;
+    const value = readable(drift.velocity_px_s[axis] * factor, half);
+    return `${name} ${value}${still ? ` ${unit}` : ""} (95 % between ${between(ci95, half)})`;
   };
   const [vx, vy] = drift.velocity_px_s;
   const widths = drift.ci95_px_s.map(([low, high]) => high - low);
@@ -132,7 +133,7 @@ function flowFinding(measured: MeasuredTrial): Finding[] {
       name: "flow",
       before: still ? "" : "The fluid flows at ",
       figure: still ? "No flow" : `${speed} ${unit}`,
-      after: `${still ? ` of the fluid can be told from none, in ${unit}` : ` ${towards(angle)}`}: ${component(0, "rightwards")}, ${component(1, "upwards")}`,
+      after: `${still ? " is seen" : ` ${towards(angle)}`}: ${component(0, "rightwards")}, ${component(1, "upwards")}`,
       behind: many(
         drift.n_cells,
         diffusing ? "cell that only diffuses" : "swimmer that turns",

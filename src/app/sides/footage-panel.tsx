@@ -13,12 +13,14 @@ export function FootagePanel({ measured }: { measured: MeasuredTrial }) {
           <li key={check.check}>
             <h3>
               <Verdict verdict={check.verdict} />
-              {asWords(check.check)}
-              {check.figure !== null && (
-                <span>
-                  {readableAlone(Number(check.figure.toPrecision(3)))} {check.unit}
-                </span>
-              )}
+              <span>
+                {asWords(check.check)}
+                {check.figure !== null && (
+                  <small>
+                    {readableAlone(Number(check.figure.toPrecision(3)))} {check.unit}
+                  </small>
+                )}
+              </span>
             </h3>
             <p>{check.advice}</p>
           </li>
