@@ -2,11 +2,14 @@ import { mkdtempSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 import {
+  AudioSample,
+  AudioSampleSource,
   EncodedPacketSink,
   EncodedVideoPacketSource,
   FilePathSource,
   FilePathTarget,
   Input,
+  MovOutputFormat,
   MP4,
   Mp4OutputFormat,
   Output,
@@ -93,6 +96,19 @@ export async function makeClip(path: string, scene: ClipScene, options: Partial<
     { ...defaults, ...options },
   );
   return path;
+}
+
+/** Writes a QuickTime file with a tenth of a second of sound and no picture. */
+export async function makeSoundOnly(path: string): Promise<void> {
+  const output = new Output({ format: new MovOutputFormat(), target: new FilePathTarget(path) });
+  const source = new AudioSampleSource({ codec: "pcm-s16" });
+  output.addAudioTrack(source);
+  await output.start();
+  const data = Int16Array.from({ length: 800 }, (_, i) => 3000 * Math.sin(i / 3));
+  const sample = new AudioSample({ data, format: "s16", numberOfChannels: 1, sampleRate: 8000, timestamp: 0 });
+  await source.add(sample);
+  sample.close();
+  await output.finalize();
 }
 
 /** Copies an MP4's packets into one laid out otherwise: with its index in front, or in fragments. */

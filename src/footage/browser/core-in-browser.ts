@@ -1,3 +1,4 @@
+/// <reference path="./ffmpeg-core.d.ts" />
 import wasmUrl from "@ffmpeg/core/wasm?url";
 import type { FfmpegCore } from "../wasm/core.ts";
 

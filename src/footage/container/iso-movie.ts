@@ -113,8 +113,20 @@ export async function readIsoMovie(bytes: Bytes): Promise<IsoMovie | null> {
 /** Boxes whose loss is a loss of recording; makers append things of their own after them. */
 const substance = new Set(["moov", "moof", "mdat"]);
 
-/** Whether an ISO base media file ends before a box of media or index does. */
-export async function isoCutShort(bytes: Bytes): Promise<boolean> {
-  for await (const box of boxes(bytes, 0, bytes.size)) if (!box.whole && substance.has(box.type)) return true;
-  return false;
+/** How far an ISO base media file reaches. */
+export interface IsoExtent {
+  /** Whether it ends before a box of media or index does. */
+  readonly cutShort: boolean;
+  /** Whether it consists of fragments, so that its index doesn't know of those that are missing. */
+  readonly fragments: boolean;
+}
+
+/** Looks at the outermost boxes of an ISO base media file. */
+export async function isoExtent(bytes: Bytes): Promise<IsoExtent> {
+  let fragments = false;
+  for await (const box of boxes(bytes, 0, bytes.size)) {
+    fragments ||= box.type === "moof";
+    if (!box.whole && substance.has(box.type)) return { cutShort: true, fragments };
+  }
+  return { cutShort: false, fragments };
 }

@@ -2,7 +2,8 @@ import { EncodedPacketSink, type Input, type InputVideoTrack } from "mediabunny"
 import type { Warning } from "../../quantities/index.ts";
 import type { Bytes } from "../bytes.ts";
 import { type EditList, editRule, libraryShift_s } from "../container/edit-list.ts";
-import { isoCutShort, readIsoMovie } from "../container/iso-movie.ts";
+import { isHidden, mayHidePictures } from "../container/hidden-pictures.ts";
+import { isoExtent, readIsoMovie } from "../container/iso-movie.ts";
 import { matroskaCutShort } from "../container/matroska-end.ts";
 import { carriesSlowMotionMarks } from "../container/slow-motion-marks.ts";
 import { type ContainerKind, containerName } from "../container/sniff.ts";
@@ -34,7 +35,9 @@ export async function describeTrack(
 ): Promise<DescribedTrack> {
   const iso = kind === "iso-bmff";
   const movie = iso ? await readIsoMovie(bytes) : null;
-  const cutShort = iso ? await isoCutShort(bytes) : await matroskaCutShort(bytes);
+  const { cutShort, fragments } = iso
+    ? await isoExtent(bytes)
+    : { cutShort: await matroskaCutShort(bytes), fragments: false };
   if (iso && movie === null) throw nothingToRead(name, true);
 
   const track = await input.getPrimaryVideoTrack();
@@ -56,7 +59,7 @@ export async function describeTrack(
   const marks = iso && (await carriesSlowMotionMarks(bytes));
   if (marks) warnings.push(slowMotionMarks);
 
-  const { first, ticks, end } = await packetTimes(track, ticksOf, rule.keeps);
+  const { first, ticks, end, packets, hidden } = await packetTimes(track, ticksOf, rule.keeps);
   if (ticks.length === 0) throw nothingToRead(name, cutShort);
   const interval = medianInterval(ticks);
   const tags = await input.getMetadataTags();
@@ -66,6 +69,8 @@ export async function describeTrack(
     track,
     decodable: (await track.getCodec()) !== null,
     ticksOf,
+    packets,
+    hidesPictures: hidden > 0,
     timestampOf: (ticks) => ticks / ticksPerSecond + shift_s,
     recording: {
       name,
@@ -82,29 +87,47 @@ export async function describeTrack(
       // Marked parts are stretched by the player only: the stored times are capture times, whatever the tag says.
       captureRateTag_hz: marks ? null : captureRateFromTags(tags.raw),
       cutShort,
-      promised_s: Math.max((end - ticks[0]!) / ticksPerSecond, wholeLength_s ?? 0),
+      promised_s: cutShort && fragments ? null : Math.max((end - ticks[0]!) / ticksPerSecond, wholeLength_s ?? 0),
       warnings,
     },
   };
 }
 
-/** Times of the frames that belong to the recording, in order, and the end of the last one, ticks. */
+/** What the packets of a track tell. */
+interface PacketTimes {
+  /** Time of the first packet, whatever it holds. */
+  readonly first: number;
+  /** Rising times of the frames that belong to the recording, and the end of the last one, ticks. */
+  readonly ticks: Float64Array;
+  readonly end: number;
+  readonly packets: number;
+  readonly hidden: number;
+}
+
 async function packetTimes(
   track: InputVideoTrack,
   ticksOf: (timestamp_s: number) => number,
   keeps: (ticks: number) => boolean,
-): Promise<{ first: number; ticks: Float64Array; end: number }> {
+): Promise<PacketTimes> {
+  const codec = await track.getCodec();
+  const lookInside = mayHidePictures(codec);
   const times: number[] = [];
   let first: number | null = null;
   let end = 0;
-  for await (const packet of new EncodedPacketSink(track).packets(undefined, undefined, { metadataOnly: true })) {
+  let packets = 0;
+  let hidden = 0;
+  const sink = new EncodedPacketSink(track);
+  for await (const packet of sink.packets(undefined, undefined, { metadataOnly: !lookInside })) {
+    packets++;
     const ticks = ticksOf(packet.timestamp);
     first ??= ticks;
-    if (!keeps(ticks)) continue;
-    times.push(ticks);
-    end = Math.max(end, ticksOf(packet.timestamp + packet.duration));
+    if (lookInside && isHidden(codec!, packet.data)) hidden++;
+    else if (keeps(ticks)) {
+      times.push(ticks);
+      end = Math.max(end, ticksOf(packet.timestamp + packet.duration));
+    }
   }
-  return { first: first ?? 0, ticks: risingTimes(times), end };
+  return { first: first ?? 0, ticks: risingTimes(times), end, packets, hidden };
 }
 
 async function internalCodec(track: InputVideoTrack): Promise<string> {

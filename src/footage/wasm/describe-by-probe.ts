@@ -1,5 +1,5 @@
 import type { Bytes } from "../bytes.ts";
-import { riffCutShort } from "../container/riff-end.ts";
+import { riffExtent } from "../container/riff-extent.ts";
 import { type ContainerKind, containerName } from "../container/sniff.ts";
 import type { Recording } from "../recording.ts";
 import { nothingToRead, noVideoTrack } from "../refusals.ts";
@@ -18,7 +18,7 @@ export async function describeByProbe(
   name: string,
   kind: ContainerKind,
 ): Promise<Recording> {
-  const cutShort = kind === "avi" && (await riffCutShort(bytes));
+  const { cutShort, frames } = kind === "avi" ? await riffExtent(bytes) : { cutShort: false, frames: null };
   const found = await probe();
   if (found === null) throw cutShort ? nothingToRead(name, true) : noVideoTrack(name);
   const { tick, pixelAspect, packets } = found;
@@ -26,7 +26,12 @@ export async function describeByProbe(
   if (times.length === 0) throw nothingToRead(name, cutShort);
   const ticks = risingTimes(times);
   const interval = medianInterval(ticks);
-  const length = ticks.at(-1)! - ticks[0]! + (interval ?? 0);
+  const listed = ticks.at(-1)! - ticks[0]! + (interval ?? 0);
+  const length = cutShort
+    ? frames !== null && interval !== null
+      ? Math.max(listed, frames * interval)
+      : null
+    : listed;
   return {
     name,
     kind,
@@ -41,7 +46,7 @@ export async function describeByProbe(
     containerRate_hz: interval !== null && interval > 0 ? tick.denominator / (interval * tick.numerator) : null,
     captureRateTag_hz: null,
     cutShort,
-    promised_s: (length * tick.numerator) / tick.denominator,
+    promised_s: length === null ? null : (length * tick.numerator) / tick.denominator,
     warnings: pixelAspect.wide === pixelAspect.high ? [] : [pixelsNotSquare(pixelAspect.wide, pixelAspect.high)],
   };
 }
