@@ -60,7 +60,7 @@ export async function measureTrial(
     framesExpected: ports.footage.facts.framesExpected,
     shift: scene.steady ? shift : null,
     gain: Float32Array.from(found.notes, (n) => n.exposure.gain),
-    falseAlarms: found.notes.reduce((sum, n) => sum + n.falseAlarms, 0),
+    falseAlarmsPerFrame: meanFalseAlarms(found),
     litShare: scene.area_px2 / (scene.width * scene.height),
     clippedShare: clippedShare(scene.still.level, scene.inView),
     spotSigma_px: sightings.count > 0 ? scene.kind.sigma_px : null,
@@ -145,4 +145,10 @@ function medianInterval_s(times_s: Float64Array): number {
   return median(
     Array.from({ length: times_s.length - 1 }, (_, i) => (times_s[i + 1] as number) - (times_s[i] as number)),
   );
+}
+
+/** Over the frames in which they were counted; null when in none. */
+function meanFalseAlarms({ notes }: Found): number | null {
+  const counted = notes.flatMap((n) => n.falseAlarms ?? []);
+  return counted.length > 0 ? counted.reduce((sum, n) => sum + n, 0) / counted.length : null;
 }

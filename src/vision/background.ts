@@ -136,8 +136,7 @@ function tileMean(
   const levels = Float32Array.from(lit, (i) => level[i]!).sort();
   const dim = 0.7 * levels[Math.floor(0.9 * levels.length)]!;
   const even = lit.filter((i) => level[i]! > dim && slope(level, width, i) < steepSlope);
-  const values = (even.length < 20 ? lit : even).map((i) => spread[i]!);
-  values.sort((a, b) => a - b);
+  const values = Float32Array.from(even.length < 20 ? lit : even, (i) => spread[i]!).sort();
   const kept = values.slice(Math.floor(values.length * 0.2), Math.ceil(values.length * 0.8));
   return Math.max(leastNoise, kept.reduce((s, v) => s + v, 0) / kept.length / spreadOfNormal);
 }

@@ -50,7 +50,7 @@ export function measureSpot(
   let xy = 0;
   let yy = s2;
   let peak = 0;
-  const reach = Math.ceil(4 * sigma * (freedom > 0 ? 1.5 : 1));
+  const reach = Math.ceil(3.6 * sigma * (freedom > 0 ? 1.4 : 1));
   const x0 = Math.max(0, Math.round(startX) - reach);
   const x1 = Math.min(picture.width - 1, Math.round(startX) + reach);
   const y0 = Math.max(0, Math.round(startY) - reach);
@@ -75,7 +75,7 @@ export function measureSpot(
       for (let i = x0; i <= x1; i++) {
         const dx = i - x;
         const q = ia * dx * dx + 2 * ib * dx * dy + ic * dy * dy;
-        if (q > 16) continue;
+        if (q > 13) continue;
         const weight = Math.exp(-0.5 * q);
         const v = weight * cut[(j - y0) * w + i - x0]!;
         s += v;
@@ -108,7 +108,7 @@ export function measureSpot(
       );
       ({ xx, xy, yy } = next);
     }
-    if (stepX * stepX + stepY * stepY < 1e-6 && round > 2) break;
+    if (stepX * stepX + stepY * stepY < 1e-5 && round > 2) break;
   }
   const off = (x - startX) ** 2 + (y - startY) ** 2;
   return { x, y, peak, xx, xy, yy, good: off < 9 * s2 };

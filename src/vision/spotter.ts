@@ -11,11 +11,15 @@ import { gaussianTaps, type Whitener } from "./whitener.ts";
 export interface FrameNote {
   readonly shift: { readonly x: number; readonly y: number };
   readonly exposure: Exposure;
-  /** Maxima of the opposite polarity above the threshold, away from any sighting: what noise alone does here. */
-  readonly falseAlarms: number;
+  /**
+   * Maxima of the opposite polarity above the threshold, away from any sighting: what noise alone does here. Counted in
+   * one frame of four, null in the others.
+   */
+  readonly falseAlarms: number | null;
   readonly sightings: number;
 }
 
+const falseAlarmsEvery = 4;
 /** Above this signal over noise a spot's own shape is measured in full; below half of it not at all. */
 const shapeSnr = 24;
 
@@ -44,7 +48,7 @@ export class Spotter {
     const threshold = scene.threshold * scene.filteredSd;
     const found = this.separate(whitener.peaks(scene.kind.sign, threshold), filtered);
     const spots = this.measure(picture, filtered, found);
-    const falseAlarms = this.countFalseAlarms(threshold, spots);
+    const falseAlarms = frame.index % falseAlarmsEvery === 0 ? this.countFalseAlarms(threshold, spots) : null;
     for (const { spot, snr } of spots) {
       if (!this.whole(spot)) continue;
       const axes = axesOf(spot);
@@ -73,7 +77,7 @@ export class Spotter {
       if (m.agreement > 0.3) this.last = { x: m.x, y: m.y };
     }
     const step = Math.round(this.last.y) * scene.width + Math.round(this.last.x);
-    this.lastExposure = fitExposure(scene.exposurePoints, luma, step);
+    this.lastExposure = fitExposure(scene.exposurePoints, luma, step, this.lastExposure);
     return { shift: this.last, exposure: this.lastExposure };
   }
 

@@ -9,15 +9,17 @@ export interface Sample {
 
 /** Most samples kept for the background. */
 const mostSamples = 48;
-/** Bytes of luma kept at most, so that a short clip need not be decoded twice. */
-const budgetBytes = 160 * 1024 * 1024;
+/** Bytes of luma kept at most, so that what was looked at need not be decoded again. */
+const budgetBytes = 400 * 1024 * 1024;
+/** A scene learnt from less than this would take slow cells for debris, seconds. */
+const shortestSpan_s = 3;
 
 /**
  * First look at a recording: keeps frames spread evenly over its first stretch, from which the still background is
- * learnt, and all frames as long as they fit in memory.
+ * learnt, and all frames of that stretch as long as they fit in memory.
  *
- * Feed frames to `take` until it has had enough; then `samples` holds at most 48, evenly spaced, and `everyFrame` all of
- * them when the recording ended before the memory budget did.
+ * Feed frames to `take` until it has had enough; then `samples` holds at most 48, evenly spaced, and `everyFrame` all
+ * frames taken, or null when they were too many to keep.
  */
 export class Survey {
   private kept: Sample[] = [];
@@ -35,16 +37,17 @@ export class Survey {
 
   take(frame: Frame): Appetite {
     this.size = { width: frame.width, height: frame.height };
-    const fits = this.all !== null && (this.all.length + 1) * frame.luma.length <= this.budget;
-    if (!fits) this.all = null;
-    if (!fits && frame.t_s > this.span_s && this.seen >= mostSamples) return "enough";
     const wanted = this.seen % this.stride === 0;
-    if (wanted || fits) {
+    if (wanted || this.all) {
       const sample = { index: frame.index, t_s: frame.t_s, luma: frame.luma.slice() };
       this.all?.push(sample);
       if (wanted) this.keep(sample);
     }
     this.seen++;
+    if (frame.t_s > this.span_s && this.seen >= mostSamples) return "enough";
+    const full = this.all !== null && (this.all.length + 1) * frame.luma.length > this.budget;
+    if (full && frame.t_s >= shortestSpan_s && this.seen >= mostSamples) return "enough";
+    if (full) this.all = null;
     return "more";
   }
 
@@ -60,9 +63,17 @@ export class Survey {
     return this.kept;
   }
 
-  /** All frames in order, or null when they were too many to keep. */
+  /** All frames taken, in order, or null when they were too many to keep. */
   get everyFrame(): readonly Sample[] | null {
     return this.all;
+  }
+
+  /** Hands over all frames taken (null when they were too many) and keeps none, so that memory is free again. */
+  release(): readonly Sample[] | null {
+    const { all } = this;
+    this.all = null;
+    this.kept = [];
+    return all;
   }
 
   private keep(sample: Sample): void {

@@ -162,15 +162,19 @@ export class Whitener {
 
   /** Robust standard deviation of the filtered picture (scaled MAD over a grid of pixels in view). */
   filteredSd(): number {
-    const values: number[] = [];
-    const every = Math.max(1, Math.floor((this.width * this.height) / 20_000));
+    const every = Math.max(1, Math.floor((this.width * this.height) / sampledForSd));
+    const values = new Float32Array(Math.ceil(this.filtered.length / every));
+    let n = 0;
     for (let i = 0; i < this.filtered.length; i += every) {
-      if (this.inverse[i]! > 0) values.push(Math.abs(this.filtered[i]!));
+      if (this.inverse[i]! > 0) values[n++] = Math.abs(this.filtered[i]!);
     }
-    values.sort((a, b) => a - b);
-    return values.length ? 1.4826 * values[values.length >> 1]! : 1;
+    const sorted = values.subarray(0, n).sort();
+    return n > 0 ? 1.4826 * sorted[n >> 1]! : 1;
   }
 }
+
+/** Pixels that the noise of a filtered picture is read from: its standard deviation is then known to about 1 %. */
+const sampledForSd = 12_000;
 
 /** Half of a symmetric Gaussian filter (middle first) of standard deviation sigma, scaled to keep white noise at 1. */
 export function gaussianTaps(sigma: number): Float32Array {

@@ -8,8 +8,8 @@ export interface FootageEvidence {
   readonly shift: { readonly x_px: Float32Array; readonly y_px: Float32Array } | null;
   /** Brightness of each frame over that of the usual frame. */
   readonly gain: Float32Array;
-  /** Opposite-polarity maxima above the threshold, whole clip: what noise alone does. */
-  readonly falseAlarms: number;
+  /** Opposite-polarity maxima above the threshold: what noise alone does. Null when not counted. */
+  readonly falseAlarmsPerFrame: number | null;
   /** Lit part of the picture, 0 … 1, and part of that which is black or white, 0 … 1. */
   readonly litShare: number;
   readonly clippedShare: number;

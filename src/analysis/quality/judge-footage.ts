@@ -112,8 +112,7 @@ function pathLength(e: FootageEvidence): QualityCheck {
 }
 
 function falseAlarms(e: FootageEvidence): QualityCheck {
-  const figure = e.times_s.length > 0 ? e.falseAlarms / e.times_s.length : null;
-  return check("false_alarms", figure, "per frame", lowerIsBetter(figure, 0.5, 2), {
+  return check("false_alarms", e.falseAlarmsPerFrame, "per frame", lowerIsBetter(e.falseAlarmsPerFrame, 0.5, 2), {
     good: "Noise is hardly ever taken for a cell.",
     fair: "Noise looks like a cell now and then; such sightings rarely make a path. Use more light or less compression.",
     poor: "Noise often looks like a cell: use more light, less compression, and a steadier camera.",
