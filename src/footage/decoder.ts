@@ -33,7 +33,6 @@ export interface Decoder {
    * @throws DecoderFailure when the decoder itself fails
    */
   walk(recording: Recording, fromTicks: number): AsyncGenerator<DecodedPicture, void, undefined>;
-  close(): void;
 }
 
 /** The decoder can't do it, or not any more; another one may. */

@@ -8,7 +8,7 @@ import type { FootageSettings } from "./footage.ts";
 import type { Opened } from "./opened.ts";
 import { emptyFile, notAVideo } from "./refusals.ts";
 import { type DescribedTrack, describeTrack } from "./samples/describe.ts";
-import type { SampleSource } from "./samples/samples-decoder.ts";
+import type { SampleSource } from "./samples/sample-source.ts";
 import type { CoreLoader, MountableFile } from "./wasm/core.ts";
 import { describeByProbe } from "./wasm/describe-by-probe.ts";
 import { probeRecording } from "./wasm/probe.ts";

@@ -1,5 +1,7 @@
 import { type Decoder, DecoderFailure, type PictureTaker } from "../decoder.ts";
-import { type SampleSource, samplesDecoder } from "../samples/samples-decoder.ts";
+import { pulledDecoder } from "../samples/pulled-decoder.ts";
+import type { SampleSource } from "../samples/sample-source.ts";
+import { webCodecsPictures } from "./webcodecs-pictures.ts";
 
 /** The browser and its version as it introduces itself. */
 const browser = (): string => /(?:Firefox|Edg|Chrome|Version)\/[\d.]+/.exec(navigator.userAgent)?.[0] ?? "browser";
@@ -12,7 +14,7 @@ const browser = (): string => /(?:Firefox|Edg|Chrome|Version)\/[\d.]+/.exec(navi
  */
 export async function webCodecsDecoder(source: SampleSource): Promise<Decoder | null> {
   if (typeof VideoDecoder === "undefined" || source.hidesPictures || !(await source.track.canDecode())) return null;
-  const decoder = samplesDecoder(`WebCodecs (${browser()})`, source);
+  const decoder = pulledDecoder(`WebCodecs (${browser()})`, webCodecsPictures(source));
   return {
     ...decoder,
     async decode(recording, taker, signal) {

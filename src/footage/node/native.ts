@@ -1,33 +1,20 @@
 import type { Decoder } from "../decoder.ts";
-import { type SampleSource, samplesDecoder } from "../samples/samples-decoder.ts";
+import { pulledDecoder } from "../samples/pulled-decoder.ts";
+import type { SampleSource } from "../samples/sample-source.ts";
+import { type CodecLibrary, nativePictures } from "./native-pictures.ts";
 
-let registered: Promise<string | null> | undefined;
+let loading: Promise<CodecLibrary | null> | undefined;
 
-/**
- * Registers the optional native decoder with the demuxing library, once, in software only (a graphics card would make
- * results depend on the machine). Gives the decoder's name, or null when it isn't installed or doesn't load here.
- */
-function registerNative(): Promise<string | null> {
-  registered ??= (async () => {
-    try {
-      const { registerMediabunnyServer } = await import("@mediabunny/server");
-      registerMediabunnyServer({ hardwareContext: null });
-      return `libavcodec ${await libraryVersion()} (native)`;
-    } catch {
-      return null;
-    }
-  })();
-  return registered;
+/** The native codec library, an optional dependency; null when it isn't installed or doesn't load here. */
+function loadLibrary(): Promise<CodecLibrary | null> {
+  loading ??= import("node-av").catch(() => null);
+  return loading;
 }
 
-/** Version of the codec library within the native decoder; it belongs to a dependency's dependency. */
-async function libraryVersion(): Promise<string> {
-  const { getFFmpegInfo } = await import("node-av");
-  return getFFmpegInfo().libraries.avcodec;
-}
-
-/** The native decoder for a track, or null when it is not installed. */
+/** The native decoder for a track, or null when the library is not there or doesn't know the codec. */
 export async function nativeDecoder(source: SampleSource): Promise<Decoder | null> {
-  const name = await registerNative();
-  return name === null ? null : samplesDecoder(name, source);
+  const library = await loadLibrary();
+  const pictures = library && (await nativePictures(library, source));
+  if (!library || !pictures) return null;
+  return pulledDecoder(`libavcodec ${library.getFFmpegInfo().libraries.avcodec} (native)`, pictures);
 }

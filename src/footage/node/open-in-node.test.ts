@@ -77,7 +77,7 @@ function meanDifference(luma: Uint8Array, shown: number, width: number, height: 
   return sum / drawn.length;
 }
 
-const native = await import("@mediabunny/server").then(
+const native = await import("node-av").then(
   () => true,
   () => false,
 );

@@ -1,22 +1,33 @@
+const prime = 0x01000193;
+const offsetBasis = 0x811c9dc5;
+
 /**
- * A 32-bit fingerprint of a picture (FNV-1a over 4-byte words, then over the bytes left). Tells whether two decoders
- * gave the same picture; cheap beside decoding it.
+ * A 32-bit fingerprint of a picture, which tells whether two pictures are the same; cheap beside decoding one.
  *
- * Fowler, Noll and Vo's hash with its 32-bit prime and offset basis.
+ * Fowler, Noll and Vo's hash 1a (32-bit prime and offset basis) over 4-byte words instead of bytes, in four lanes that
+ * the processor works on at a time, then over the lanes and the bytes left.
  */
 export function fingerprint(luma: Uint8Array): number {
-  let hash = 0x811c9dc5;
-  const aligned = luma.byteOffset % 4 === 0;
-  const words = aligned ? new Int32Array(luma.buffer, luma.byteOffset, luma.length >> 2) : [];
-  for (let i = 0; i < words.length; i++) hash = Math.imul(hash ^ words[i]!, 0x01000193);
-  // Memory that is not aligned to words is read byte by byte into the same words.
-  let at = words.length * 4;
-  if (!aligned)
-    for (; at + 4 <= luma.length; at += 4)
-      hash = Math.imul(
-        hash ^ (luma[at]! | (luma[at + 1]! << 8) | (luma[at + 2]! << 16) | (luma[at + 3]! << 24)),
-        0x01000193,
-      );
-  for (; at < luma.length; at++) hash = Math.imul(hash ^ luma[at]!, 0x01000193);
+  const words = wordsOf(luma);
+  const inLanes = words.length & ~3;
+  let a = offsetBasis;
+  let b = offsetBasis;
+  let c = offsetBasis;
+  let d = offsetBasis;
+  for (let i = 0; i < inLanes; i += 4) {
+    a = Math.imul(a ^ words[i]!, prime);
+    b = Math.imul(b ^ words[i + 1]!, prime);
+    c = Math.imul(c ^ words[i + 2]!, prime);
+    d = Math.imul(d ^ words[i + 3]!, prime);
+  }
+  let hash = offsetBasis;
+  for (const lane of [a, b, c, d]) hash = Math.imul(hash ^ lane, prime);
+  for (let at = inLanes * 4; at < luma.length; at++) hash = Math.imul(hash ^ luma[at]!, prime);
   return hash >>> 0;
+}
+
+/** The bytes as whole words; copied first where they aren't aligned to words. */
+function wordsOf(luma: Uint8Array): Int32Array {
+  const { buffer, byteOffset } = luma.byteOffset % 4 === 0 ? luma : luma.slice();
+  return new Int32Array(buffer, byteOffset, luma.length >> 2);
 }

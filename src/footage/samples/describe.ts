@@ -12,7 +12,7 @@ import { nothingToRead, noVideoTrack } from "../refusals.ts";
 import { captureRateFromTags } from "../time/capture-rate-tag.ts";
 import { medianInterval, risingTimes } from "../time/intervals.ts";
 import { pixelsNotSquare, severalTracks, slowMotionMarks } from "../warnings.ts";
-import type { SampleSource } from "./samples-decoder.ts";
+import type { SampleSource } from "./sample-source.ts";
 
 /** A recording described through the demuxing library, and the track to decode. */
 export interface DescribedTrack extends SampleSource {

@@ -77,7 +77,6 @@ export function wasmDecoder(load: CoreLoader, file: MountableFile): Decoder {
         next = ticks.find((time) => time > last.ticks);
       }
     },
-    close() {},
   };
 }
 

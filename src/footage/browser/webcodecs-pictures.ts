@@ -1,7 +1,8 @@
-import { type InputVideoTrack, type VideoSample, VideoSampleSink } from "mediabunny";
-import { Stopped } from "../../quantities/index.ts";
-import { type DecodedPicture, type Decoder, DecoderFailure } from "../decoder.ts";
+import { type VideoSample, VideoSampleSink } from "mediabunny";
+import { type DecodedPicture, DecoderFailure } from "../decoder.ts";
 import { LumaTightener } from "../picture/tight-luma.ts";
+import { attempt, type PictureStream } from "../samples/pulled-decoder.ts";
+import type { SampleSource } from "../samples/sample-source.ts";
 
 /** Formats whose first plane is luma, and the depth of their samples. */
 const lumaDepth: Readonly<Record<string, number>> = Object.fromEntries(
@@ -15,24 +16,11 @@ const lumaDepth: Readonly<Record<string, number>> = Object.fromEntries(
   ]),
 );
 
-/** What a decoder behind the demuxing library needs to know of its track. */
-export interface SampleSource {
-  readonly track: InputVideoTrack;
-  readonly packets: number;
-  /** Whether some packets hold pictures that are never shown. */
-  readonly hidesPictures: boolean;
-  /** Ticks of the track's own clock, before any edit list, of the library's time; and back. */
-  ticksOf(timestamp_s: number): number;
-  timestampOf(ticks: number): number;
-}
-
 /**
- * Decodes through the demuxing library's own iterator of samples, which keeps the decoder some frames ahead while the
+ * Pictures through the demuxing library's own iterator of samples, which keeps WebCodecs some frames ahead while the
  * taker works. Only pictures with a luma plane are accepted: rebuilding luma from RGB would change the numbers.
- *
- * @param name as results name the decoder
  */
-export function samplesDecoder(name: string, source: SampleSource): Decoder {
+export function webCodecsPictures(source: SampleSource): PictureStream {
   const tightener = new LumaTightener();
   let memory = new Uint8Array(0);
 
@@ -49,7 +37,8 @@ export function samplesDecoder(name: string, source: SampleSource): Decoder {
     return { ticks, width, height, bitDepth, luma };
   }
 
-  async function* pictures(from_s: number | undefined, wants: (ticks: number) => boolean) {
+  return async function* pictures(fromTicks, wants) {
+    const from_s = fromTicks === null ? undefined : source.timestampOf(fromTicks);
     const samples = new VideoSampleSink(source.track, { hardwareAcceleration: "prefer-software" }).samples(from_s);
     try {
       for (;;) {
@@ -66,28 +55,5 @@ export function samplesDecoder(name: string, source: SampleSource): Decoder {
     } finally {
       await samples.return();
     }
-  }
-
-  return {
-    name,
-    async decode(_recording, taker, signal) {
-      const wants = (ticks: number) => {
-        if (signal?.aborted) throw new Stopped();
-        return taker.wants(ticks);
-      };
-      for await (const picture of pictures(undefined, wants)) if (taker.take(picture) === "enough") break;
-    },
-    walk: ({ keeps }, fromTicks) =>
-      pictures(source.timestampOf(fromTicks), (ticks) => ticks >= fromTicks && keeps(ticks)),
-    close() {},
   };
-}
-
-/** Awaits what the decoder does; its errors become failures of the decoder, never of the taker. */
-async function attempt<T>(work: Promise<T>): Promise<T> {
-  try {
-    return await work;
-  } catch (error) {
-    throw error instanceof DecoderFailure ? error : new DecoderFailure(String(error), { cause: error });
-  }
 }
