@@ -1,12 +1,12 @@
-import { Input, MATROSKA, MP4, QTFF, type Source, WEBM } from "mediabunny";
+import { Input, Logging, LogLevel, MATROSKA, MP4, QTFF, type Source, WEBM } from "mediabunny";
 import { InputError } from "../quantities/index.ts";
 import type { Bytes } from "./bytes.ts";
-import { sniffContainer } from "./container/sniff.ts";
+import { type ContainerKind, sniffContainer } from "./container/sniff.ts";
 import type { Decoder } from "./decoder.ts";
 import { DecoderChoice, type DecoderMaker } from "./decoder-choice.ts";
 import type { FootageSettings } from "./footage.ts";
 import type { Opened } from "./opened.ts";
-import { emptyFile, notAVideo } from "./refusals.ts";
+import { emptyFile, notAVideo, nothingToRead } from "./refusals.ts";
 import { type DescribedTrack, describeTrack } from "./samples/describe.ts";
 import type { SampleSource } from "./samples/sample-source.ts";
 import type { CoreLoader, MountableFile } from "./wasm/core.ts";
@@ -35,16 +35,14 @@ export async function openSource(file: OpenableSource, settings: FootageSettings
   const kind = sniffContainer(head);
   if (kind === null) throw notAVideo(name);
 
+  // What the demuxing library has to say is said in refusals and warnings of our own.
+  Logging.level = LogLevel.Errors;
   const input = new Input({ formats: [MP4, QTFF, MATROSKA, WEBM], source: file.source });
   const close = () => input.dispose();
   const probe = () =>
-    probeRecording(file.loadCore, file.mountable, {
-      track: 0,
-      allPackets: true,
-      ignoreEditList: kind === "iso-bmff",
-    });
+    probeRecording(file.loadCore, file.mountable, { track: 0, allPackets: true, ignoreEditList: false });
   try {
-    const described = kind === "iso-bmff" || kind === "matroska" ? await describe(input, file) : null;
+    const described = kind === "iso-bmff" || kind === "matroska" ? await describe(input, file, kind) : null;
     const recording = described?.recording ?? (await describeByProbe(probe, bytes, name, kind));
     const only = settings.decoder === "auto" ? undefined : settings.decoder;
     const choice = await DecoderChoice.among(recording, makers(file, described, settings), only);
@@ -53,15 +51,15 @@ export async function openSource(file: OpenableSource, settings: FootageSettings
     close();
     throw error;
   }
+}
 
-  /** Through the demuxing library; what it can't make sense of is left to ffmpeg. */
-  async function describe(of: Input, { name, bytes }: OpenableSource): Promise<DescribedTrack | null> {
-    try {
-      return await describeTrack(of, bytes, name, kind!);
-    } catch (error) {
-      if (error instanceof InputError) throw error;
-      return null;
-    }
+/** Describes through the demuxing library. What it stumbles over is damaged: no times would be sure. */
+async function describe(input: Input, { name, bytes }: OpenableSource, kind: ContainerKind): Promise<DescribedTrack> {
+  try {
+    return await describeTrack(input, bytes, name, kind);
+  } catch (error) {
+    if (error instanceof InputError) throw error;
+    throw Object.assign(nothingToRead(name, false), { cause: error });
   }
 }
 

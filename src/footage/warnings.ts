@@ -28,7 +28,7 @@ export const framesMissing = (missing: number, expected: number): Warning => ({
 
 export const framesRepeated = (repeated: number, read: number): Warning => ({
   code: "frames-repeated",
-  message: `${repeated} of ${read} frames are exact copies of the frame before, as converters and messengers put in to even out the rate. They show nothing new; measure the untouched original if you have it.`,
+  message: `${repeated} of ${read} frames are exact copies of the frame before: a converter or messenger put them in to even out the rate, or its compression saw no change. They show nothing new; measure the untouched original if you have it.`,
 });
 
 /** @param lost_s capture seconds lost at the end, null when the file doesn't tell */

@@ -63,7 +63,7 @@ export async function nativePictures(library: CodecLibrary, source: SampleSource
     return context;
   }
 
-  const tightener = new LumaTightener();
+  const tightener = new LumaTightener(true);
 
   function pictureOf(frame: Frame, ticks: number): DecodedPicture {
     const { width, height } = frame;

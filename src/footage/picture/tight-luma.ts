@@ -13,13 +13,16 @@ export interface LumaPlane {
 export class LumaTightener {
   #buffer = new Uint8Array(0);
 
+  /** @param foreign whether the planes lie in memory that isn't ours and may go away: then they are always copied */
+  constructor(readonly foreign = false) {}
+
   /**
    * The plane without padding, one byte a sample: the given memory itself when it already is so, else the reused
    * buffer. Deeper samples are rounded to 8 bits, half up, and held at 255.
    */
   tighten({ bytes, offset, stride, width, height, bitDepth }: LumaPlane): Uint8Array {
     const size = width * height;
-    if (bitDepth === 8 && stride === width) return bytes.subarray(offset, offset + size);
+    if (!this.foreign && bitDepth === 8 && stride === width) return bytes.subarray(offset, offset + size);
     if (this.#buffer.length !== size) this.#buffer = new Uint8Array(size);
     const out = this.#buffer;
     if (bitDepth === 8) {

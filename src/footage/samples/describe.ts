@@ -41,7 +41,7 @@ export async function describeTrack(
   if (iso && movie === null) throw nothingToRead(name, true);
 
   const track = await input.getPrimaryVideoTrack();
-  if (track === null) throw cutShort && !iso ? nothingToRead(name, true) : noVideoTrack(name);
+  if (track === null) throw cutShort ? nothingToRead(name, true) : noVideoTrack(name);
   const isoTrack = movie?.tracks.find(({ id }) => id === track.id);
   const ticksPerSecond = isoTrack?.timescale || (await track.getTimeResolution());
   const editList: EditList = isoTrack

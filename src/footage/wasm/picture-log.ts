@@ -36,7 +36,9 @@ export class PictureLog {
 
   /** The note of the next picture, in the order in which they come out; undefined when there is none yet. */
   next(): PictureNote | undefined {
-    const note = this.#notes[this.#taken++];
+    const note = this.#notes[this.#taken];
+    if (note === undefined) return undefined;
+    this.#taken++;
     if (this.#taken > 256) {
       this.#notes = this.#notes.slice(this.#taken);
       this.#taken = 0;
