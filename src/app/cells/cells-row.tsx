@@ -16,7 +16,7 @@ export const rowId = (p: number): string => `cell-row-${p}`;
 
 /** One cell: when it was followed, how fast it swims with its standard error, and why it doesn't count if so. */
 export function CellsRow({ cell, factor, position, chosen, choose }: CellsRowProps) {
-  const motile = cell.motile === null ? "can’t tell" : cell.motile ? "yes" : "no";
+  const motile = cell.motile === null ? "?" : cell.motile ? "yes" : "no";
   return (
     // The table as a whole takes the arrow keys.
     <tr
@@ -33,7 +33,7 @@ export function CellsRow({ cell, factor, position, chosen, choose }: CellsRowPro
       <td>{cell.straightness === null ? "" : cell.straightness.toFixed(2)}</td>
       <td className={motile === "yes" ? "word" : "word quiet"}>{motile}</td>
       <td className={cell.kept ? "word" : "word quiet"} title={cell.reason}>
-        {cell.kept ? "yes" : `no: ${cell.reason}`}
+        {cell.kept ? "yes" : cell.reason}
       </td>
     </tr>
   );

@@ -66,17 +66,34 @@ function drawTail(
   const from_s = look.tail_s === null ? Number.NEGATIVE_INFINITY : frameTimes_s[look.frame]! - look.tail_s;
   let start = last;
   while (start > first && paths.t_s[start - 1]! >= from_s) start--;
-  const points = pointsOf(measured, view, look.frame, start, last);
+  const whole = pointsOf(measured, view, look.frame, start, last);
   const kind = kindOf(measured, p);
   pen.lineCap = "butt";
-  stroke(pen, points, casing, 3.4, []);
   if (kind === "motile") {
+    const body = bodyOf(measured, view, last);
+    const points = clearOf(body, whole);
+    stroke(pen, points, casing, 3.4, []);
     const piece = Math.max(1, Math.ceil((points.length - 1) / widths.length));
     for (let i = widths.length - 1, to = points.length - 1; to > 0; to -= piece, i--) {
       stroke(pen, points.slice(Math.max(0, to - piece), to + 1), kinds.motile.colour, widths[Math.max(0, i)]!, []);
     }
-    drawHead(pen, points, kinds.motile.colour);
-  } else stroke(pen, points, kinds[kind].colour, 1.4, kinds[kind].dash);
+    drawHead(pen, whole, body, kinds.motile.colour);
+    return;
+  }
+  stroke(pen, whole, casing, 3.4, []);
+  stroke(pen, whole, kinds[kind].colour, 1.4, kinds[kind].dash);
+}
+
+/** Half the length of the cell at a row of the path table, CSS pixels, with a little room around it. */
+function bodyOf({ paths, sightings }: MeasuredTrial, view: ViewTransform, row: number): number {
+  return Math.max(5, 3 * (sightings.major_px[paths.sighting[row]!] ?? 0) * view.zoom) + 1.5;
+}
+
+/** The points of a path up to where its cell begins, so that the cell stays to be seen. */
+function clearOf(body: number, points: readonly StagePoint[]): readonly StagePoint[] {
+  const tip = points.at(-1);
+  const last = points.findLastIndex((point) => tip && Math.hypot(tip.x - point.x, tip.y - point.y) >= body);
+  return points.slice(0, last + 1);
 }
 
 /** The whole path of the chosen cell, before and after the frame alike, in white on a heavy casing. */
@@ -97,7 +114,8 @@ function drawChosen(
   stroke(pen, after, "#ffffff", 1.2, [1.5, 4]);
   stroke(pen, before, "rgb(8 12 16 / 0.85)", 5, []);
   stroke(pen, before, "#ffffff", 2.4, []);
-  if (kindOf(measured, p) === "motile") drawHead(pen, before, "#ffffff");
+  if (kindOf(measured, p) === "motile")
+    drawHead(pen, before, bodyOf(measured, view, Math.max(first, split - 1)), "#ffffff");
 }
 
 interface StagePoint {
@@ -137,8 +155,8 @@ function stroke(
   pen.stroke();
 }
 
-/** An arrow head just before the cell, along the last stretch long enough to have a direction. */
-function drawHead(pen: CanvasRenderingContext2D, points: readonly StagePoint[], colour: string): void {
+/** An arrow head just ahead of the cell, along the last stretch long enough to have a direction. */
+function drawHead(pen: CanvasRenderingContext2D, points: readonly StagePoint[], body: number, colour: string): void {
   const tip = points.at(-1);
   const from = points.findLast((point) => tip && Math.hypot(tip.x - point.x, tip.y - point.y) >= 6);
   if (!tip || !from) return;
@@ -147,9 +165,9 @@ function drawHead(pen: CanvasRenderingContext2D, points: readonly StagePoint[], 
   pen.translate(tip.x, tip.y);
   pen.rotate(angle);
   pen.beginPath();
-  pen.moveTo(13, 0);
-  pen.lineTo(6.5, -3.6);
-  pen.lineTo(6.5, 3.6);
+  pen.moveTo(body + 6.5, 0);
+  pen.lineTo(body, -3.6);
+  pen.lineTo(body, 3.6);
   pen.closePath();
   pen.setLineDash([]);
   pen.lineWidth = 1.6;

@@ -63,7 +63,7 @@ export const TimeRibbon = memo(function TimeRibbon({ times_s, frame, field, coun
         onKeyDown={press}
       >
         <svg width={width} height={height} aria-hidden="true">
-          <TimeAxis x={x} y={fieldHeight + countHeight} />
+          {times_s.length > 0 && <TimeAxis x={x} y={fieldHeight + countHeight} />}
           {counts && <CountLine counts={counts} times_s={times_s} x={x} top={fieldHeight} height={countHeight} />}
           {field?.from === "steps" && <FieldLane field={field} x={x} end_s={end_s} height={fieldHeight} />}
           <g className="playhead" transform={`translate(${x(t_s)} 0)`}>

@@ -40,7 +40,7 @@ export function TrialHead({ trial, measure, stop, close, saved, failedToSave }: 
         <div className="actions">
           {(!trial.measured || isOutdated(trial)) && (
             <button type="button" className="first" onClick={measure}>
-              {trial.measured ? "Measure again" : "Measure"}
+              {trial.measured || trial.problem ? "Measure again" : "Measure"}
             </button>
           )}
           {trial.measured && (
