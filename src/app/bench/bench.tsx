@@ -31,7 +31,7 @@ const noTimes = new Float64Array(0);
 export function Bench({ describe, ...head }: BenchProps) {
   const { description, recording, measured } = head.trial;
   const [view, dispatch] = useReducer(viewingReducer, firstLook);
-  const pictures = usePictures(recording, description.captureFps, view.frame);
+  const pictures = usePictures(recording, description.captureFps, view.frame, measured?.frameTimes_s ?? null);
   const times_s = measured?.frameTimes_s ?? pictures.opened?.times_s ?? noTimes;
   const frames = times_s.length;
   useEffect(() => dispatch({ type: "counted", frames }), [frames]);

@@ -1,6 +1,7 @@
-import { useCallback, useEffect, useRef, useState } from "react";
+import { useCallback, useEffect, useMemo, useRef, useState } from "react";
 import { type OpenedPictures, openPictures, type PicturesWorker } from "../../../workers/index.ts";
 import { type Problem, problemOf } from "../state/problem.ts";
+import { nearestFrame } from "./frame-at.ts";
 
 /** A decoded frame on show. */
 export interface Picture {
@@ -19,8 +20,17 @@ export interface Pictures {
   readonly problem: Problem | null;
 }
 
-/** Opens a recording for looking at and keeps asking for the frame that is wanted. */
-export function usePictures(recording: File, captureFps: number | null, frame: number): Pictures {
+/**
+ * Opens a recording for looking at and keeps asking for the frame that is wanted.
+ *
+ * @param measured_s times of the frames that were measured, which `frame` counts; null before measuring
+ */
+export function usePictures(
+  recording: File,
+  captureFps: number | null,
+  frame: number,
+  measured_s: Float64Array | null,
+): Pictures {
   const worker = useRef<PicturesWorker | null>(null);
   const [opened, setOpened] = useState<OpenedPictures | null>(null);
   const [picture, setPicture] = useState<Picture | null>(null);
@@ -49,11 +59,20 @@ export function usePictures(recording: File, captureFps: number | null, frame: n
     };
   }, [recording, captureFps, show]);
 
+  // Where a frame can't be decoded, measuring has one less than the container lists: times tell which is which.
+  const listed_s = opened?.times_s ?? null;
+  const differ = listed_s !== null && measured_s !== null && listed_s.length !== measured_s.length;
+  const wanted = differ ? nearestFrame(listed_s, measured_s[frame] ?? 0) : frame;
+
   // Asked again when the recording is another one: `opened` is a new object then.
   // biome-ignore lint/correctness/useExhaustiveDependencies: see above
   useEffect(() => {
-    worker.current?.show(frame);
-  }, [frame, opened]);
+    worker.current?.show(wanted);
+  }, [wanted, opened]);
 
-  return { opened, picture, problem };
+  const shown = useMemo(
+    () => (picture && differ ? { ...picture, frame: nearestFrame(measured_s, listed_s[picture.frame] ?? 0) } : picture),
+    [picture, differ, measured_s, listed_s],
+  );
+  return { opened, picture: shown, problem };
 }

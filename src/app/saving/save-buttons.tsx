@@ -46,7 +46,7 @@ export function SaveButtons({ measured, name, saved, failed }: SaveButtonsProps)
         <Icon name="save" /> Save results
       </button>
       {window.showDirectoryPicker && (
-        <button type="button" onClick={() => attempt(folder)}>
+        <button type="button" aria-label="Save into a folder" onClick={() => attempt(folder)}>
           Into a folder …
         </button>
       )}

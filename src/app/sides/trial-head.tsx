@@ -18,7 +18,7 @@ export interface TrialHeadProps {
 /** Which trial is on the bench, and what can be done with it. */
 export function TrialHead({ trial, measure, stop, close, saved, failedToSave }: TrialHeadProps) {
   const { strain, culture, condition, recording } = trial.description;
-  const about = [strain, culture, condition, recording].filter((it) => it !== null);
+  const about = [strain, culture, condition, recording].filter((it) => it !== null && it !== titleOf(trial));
   const busy = trial.work.state !== "idle";
   return (
     <header className="trial-head">
