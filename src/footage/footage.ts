@@ -39,7 +39,9 @@ export interface ReadReport {
 }
 
 /**
- * An opened recording. Every way of decoding obeys this one interface.
+ * An opened recording. Every way of decoding obeys this one interface and gives the same bytes: luma as it is stored,
+ * in the recording's own range (16 … 235 in most, 0 … 255 in Motion JPEG), deeper samples rounded to 8 bits. Only
+ * recordings that store red, green and blue have their luma computed (ITU-R BT.601).
  *
  * `read` delivers every frame from the first, in order of capture time, each upright and with its own capture time,
  * and waits for the receiver before the next: memory doesn't grow with length. The receiver works synchronously,

@@ -29,8 +29,9 @@ export class Reading implements PictureTaker {
   #late = 0;
   #size: { width: number; height: number } | null = null;
   #upright = new Uint8Array(0);
-  /** Pictures of the second decoder seen so far; null while the first is at work. */
-  #seenAgain: number | null = null;
+  /** Frames delivered before the present decoder began, and how many of them it has given again. */
+  #before = 0;
+  #seenAgain = 0;
 
   constructor(
     readonly recording: Recording,
@@ -40,6 +41,7 @@ export class Reading implements PictureTaker {
 
   /** To be called before another decoder starts from the first picture. */
   again(): void {
+    this.#before = this.framesRead;
     this.#seenAgain = 0;
     this.#late = 0;
   }
@@ -49,12 +51,13 @@ export class Reading implements PictureTaker {
   }
 
   take(picture: DecodedPicture): Appetite {
-    if (this.#seenAgain !== null && this.#seenAgain < this.framesRead) return this.#compare(picture, this.#seenAgain++);
     const { ticks, width, height } = picture;
-    if (ticks <= this.#last) {
+    const again = this.#seenAgain < this.#before;
+    if (ticks <= (again ? (this.#trace.ticks[this.#seenAgain - 1] ?? Number.NEGATIVE_INFINITY) : this.#last)) {
       this.#late++;
       return "more";
     }
+    if (again) return this.#compare(picture, this.#seenAgain++);
     this.#size ??= { width, height };
     if (width !== this.#size.width || height !== this.#size.height)
       throw sizeChanges(this.recording.name, `${this.#size.width} × ${this.#size.height}`, `${width} × ${height}`);
