@@ -6,11 +6,6 @@ export interface Bytes {
   read(at: number, length: number): Promise<Uint8Array>;
 }
 
-/** Bytes held in memory. */
-export function bytesOf(array: Uint8Array): Bytes {
-  return { size: array.length, read: async (at, length) => array.subarray(at, at + length) };
-}
-
 /** Bytes of a picked file. */
 export function bytesOfBlob(blob: Blob): Bytes {
   return {

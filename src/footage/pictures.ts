@@ -19,7 +19,7 @@ export interface Picture {
  * frame, as long as every frame can be decoded.
  *
  * A frame near the last one asked for costs one decoding or none; a frame elsewhere costs the way from the key frame
- * before it. With ffmpeg in WebAssembly frames come in windows of 48 MB of luma, and each window costs that way anew.
+ * before it. With ffmpeg in WebAssembly frames come in windows of 24 MB of luma, and each window costs that way anew.
  */
 export interface Pictures {
   readonly facts: FootageFacts;

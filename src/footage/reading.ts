@@ -7,7 +7,7 @@ import { sizeChanges } from "./refusals.ts";
 import { cutOff, framesMissing, framesRepeated, outOfOrder } from "./warnings.ts";
 
 /** The pictures delivered so far, enough to tell whether another decoder gives the same ones. */
-export interface Trace {
+interface Trace {
   readonly ticks: number[];
   readonly fingerprints: number[];
 }

@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { bytesOf } from "../bytes.ts";
+import type { Bytes } from "../bytes.ts";
 import { isoExtent } from "./iso-movie.ts";
 import { matroskaCutShort } from "./matroska-end.ts";
 import { riffExtent } from "./riff-extent.ts";
@@ -11,7 +11,11 @@ const box = (type: string, size: number, present = size) => [
   ...text(type),
   ...Array(present - 8).fill(0),
 ];
-const file = (...parts: number[][]) => bytesOf(Uint8Array.from(parts.flat()));
+
+function file(...parts: number[][]): Bytes {
+  const bytes = Uint8Array.from(parts.flat());
+  return { size: bytes.length, read: async (at, length) => bytes.subarray(at, at + length) };
+}
 
 describe("an ISO base media file", () => {
   it("is whole when its last box is", async () => {

@@ -26,7 +26,7 @@ const block = 32;
  * @param from row-major plane of `width` × `height` bytes without padding, as coded
  * @param to receives the upright plane, as many bytes; `height` wide for odd quarter turns
  */
-export function turnUpright(from: Uint8Array, width: number, height: number, turn: QuarterTurn, to: Uint8Array): void {
+function turnUpright(from: Uint8Array, width: number, height: number, turn: QuarterTurn, to: Uint8Array): void {
   if (turn === 0) {
     to.set(from.subarray(0, width * height));
     return;

@@ -10,7 +10,7 @@ import { type Probe, probeRecording } from "./probe.ts";
 import { inputPath, picturesPath, runFfmpeg } from "./run-core.ts";
 
 /** Luma that `walk` decodes at a time, since the core can't be halted between pictures. */
-const window_bytes = 48e6;
+const window_bytes = 24e6;
 
 /**
  * Decodes with ffmpeg compiled to WebAssembly. The recording is read in pieces and luma streams out picture by picture,
