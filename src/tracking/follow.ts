@@ -19,6 +19,9 @@ const knownAfter = 5;
 /** A cell sighted only once is given up after this many missed frames; its velocity could be anything. */
 const newcomerFrames = 2.5;
 
+/** Standard deviations of a spot along its axis that make a body, and sightings after which a cell's place is known. */
+const bodyLengths = 2.2;
+const bodyFrom = 3;
 /** A sighting longer than this over the usual length is of two cells, or of one and part of another. */
 const tooLong = 1.4;
 
@@ -27,12 +30,17 @@ const tooLong = 1.4;
  * than the clip's usually are, it shows cells that touch, and its middle may be anywhere between theirs.
  */
 export function positionVariances(s: Sightings): Float64Array {
-  const usual = s.count > 0 ? (s.major_px.slice().sort()[s.count >> 1] as number) : 0;
+  const usual = usualMajor_px(s);
   return Float64Array.from({ length: s.count }, (_, i) => {
     const own = ((s.seX_px[i] as number) ** 2 + (s.seY_px[i] as number) ** 2) / 2;
     const excess = (s.major_px[i] as number) ** 2 - (tooLong * usual) ** 2;
     return own + floorVariance_px2 + Math.max(0, excess) / 2;
   });
+}
+
+/** Median standard deviation of sightings along their long axes, pixels. */
+function usualMajor_px(s: Sightings): number {
+  return s.count > 0 ? (s.major_px.slice().sort()[s.count >> 1] as number) : 0;
 }
 
 /**
@@ -47,6 +55,7 @@ export class Follower {
   private readonly variances: Float64Array;
   private readonly settings: TrackingSettings;
   private readonly frameInterval_s: number;
+  private readonly usualMajor: number;
   private live: Piece[] = [];
   readonly pieces: Piece[] = [];
 
@@ -64,6 +73,7 @@ export class Follower {
     this.model = model;
     this.settings = settings;
     this.frameInterval_s = frameInterval_s;
+    this.usualMajor = usualMajor_px(sightings);
   }
 
   /** Takes in one frame. Frames must come in order. */
@@ -74,7 +84,8 @@ export class Follower {
     for (let row = first; row < end; row++) free.add(row);
     const predicted = this.live.map((p) => predict(this.model, p.belief, t_s));
     const missed = this.pairByPrediction(frame, predicted, free);
-    this.pairAfterSharpTurns(frame, missed, predicted, free);
+    const stillMissed = this.pairWithinABody(frame, missed, predicted, free);
+    this.pairAfterSharpTurns(frame, stillMissed, predicted, free);
     for (const row of free) this.begin(row, t_s);
   }
 
@@ -107,6 +118,38 @@ export class Follower {
       free.delete(row);
     }
     return [...missed];
+  }
+
+  /**
+   * A sighting that nobody else claims, within a body's length of where a cell should be, is that cell: encoders hold a
+   * spot back for a frame and let it jump, and a cell that comes out from behind another isn't where it was thought.
+   */
+  private pairWithinABody(
+    frame: number,
+    missed: readonly number[],
+    predicted: readonly Belief[],
+    free: Set<number>,
+  ): number[] {
+    const { sightings } = this;
+    const pairings: Pairing[] = [];
+    for (const cell of missed) {
+      if ((this.live[cell] as Piece).rows.length < bodyFrom) continue;
+      const b = predicted[cell] as Belief;
+      const reach = bodyLengths * this.usualMajor + 3 * Math.sqrt(b.pp);
+      this.index.near(frame, b.x, b.y, reach, (row) => {
+        const d2 = distance2(sightings, row, b);
+        if (free.has(row) && d2 <= reach * reach) pairings.push({ row: cell, column: row, cost: d2 });
+      });
+    }
+    const paired = new Set<number>();
+    for (const { row: cell, column: row } of assign(pairings, Number.MAX_SAFE_INTEGER)) {
+      const b = predicted[cell] as Belief;
+      const surprise = distance2(sightings, row, b) / 4;
+      this.extend(cell, { ...b, pp: b.pp + surprise }, row);
+      paired.add(cell);
+      free.delete(row);
+    }
+    return missed.filter((cell) => !paired.has(cell));
   }
 
   /** A cell that turned sharply lies within a circle of what it can swim about where it was last seen. */

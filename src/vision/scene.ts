@@ -36,8 +36,14 @@ export interface Scene {
 const shiftNeeded_px = 0.12;
 /** Opposite-polarity maxima a frame allowed when the threshold is checked. */
 const oppositeAllowed = 3;
-/** The check raises the threshold this far at most: what stands higher in the opposite polarity isn't noise. */
+/** Noise that an encoder has smoothed away is still believed to be there: what it drew instead is no better known. */
+const leastFilteredSd = 1;
+/**
+ * The check raises the threshold this far at most, or to this part of how far the cells themselves stand out: what stands
+ * higher in the opposite polarity isn't noise.
+ */
 const highestRaised = 6.5;
+const partOfCells = 0.2;
 
 /**
  * Learns the still scene from a survey of the clip, and returns it with the whitener that finding cells uses.
@@ -259,7 +265,7 @@ function checkThreshold(
   for (const { sample, shift, exposure } of chosen) {
     whitener.whiten(sample.luma, shift, exposure);
     const filtered = whitener.filter(taps);
-    const sd = whitener.filteredSd();
+    const sd = Math.max(leastFilteredSd, whitener.filteredSd());
     spreads.push(sd);
     const cells = Array.from(whitener.peaks(kind.sign, byChance * sd)).map((i) => xy(i, whitener.width));
     for (const i of whitener.peaks(opposite, byChance * sd)) {
@@ -273,7 +279,9 @@ function checkThreshold(
   heights.sort((a, b) => b - a);
   const allowed = Math.ceil(oppositeAllowed * rate * chosen.length);
   const needed = heights.length > allowed ? heights[allowed]! + 0.05 : 0;
-  return { threshold: Math.max(byChance, Math.min(highestRaised, needed)), filteredSd: spreads[spreads.length >> 1]! };
+  const filteredSd = spreads[spreads.length >> 1]!;
+  const highest = Math.max(highestRaised, (partOfCells * kind.strength) / filteredSd);
+  return { threshold: Math.max(byChance, Math.min(highest, needed)), filteredSd };
 }
 
 function xy(i: number, width: number): { x: number; y: number } {

@@ -10,6 +10,8 @@ export interface SeparatedLayer {
 
 /** A spot that would be seen in a single frame at this signal over noise is looked at. */
 const visible = 5;
+/** Fainter still spots than this part of a cell's contrast are grain that the encoder has frozen. */
+const leastOfCell = 0.15;
 /** More wandering than this, beyond what its localisation error explains, is motion. Pixels. */
 const leastWander_px = 0.3;
 /** Wandering less than this is left to imperfect steadying. Pixels. */
@@ -115,6 +117,9 @@ function spotsOf(
   side: number,
 ): number[] {
   const reach = Math.max(2, Math.round(1.5 * kind.sigma_px));
+  // Strength of a matched filter on a Gaussian spot of unit noise: peak times √π σ.
+  const cell = (kind.strength / (Math.sqrt(Math.PI) * kind.sigma_px)) * medianOf(noise);
+  const contrast = leastOfCell * cell;
   const height2 = height - reach;
   const strength = (i: number) => (kind.sign * (narrow[i]! - wide[i]!) * side) / noise[i]!;
   const out: number[] = [];
@@ -123,7 +128,7 @@ function spotsOf(
       const i = y * width + x;
       if (inView[i] === 0) continue;
       const v = strength(i);
-      if (v < visible) continue;
+      if (v < visible || kind.sign * (narrow[i]! - wide[i]!) < contrast) continue;
       let top = true;
       for (let dy = -reach; dy <= reach && top; dy++) {
         for (let dx = -reach; dx <= reach && top; dx++) {
@@ -154,6 +159,11 @@ function calm(still: Background, width: number, height: number, x: number, y: nu
     }
   }
   return spread < explained;
+}
+
+function medianOf(values: Float32Array): number {
+  const some = values.filter((_, i) => i % 101 === 0).sort();
+  return some.length > 0 ? some[some.length >> 1]! : 1;
 }
 
 /** Does the spot at (x, y) move, or come and go, over the samples? */
