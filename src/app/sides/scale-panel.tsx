@@ -10,7 +10,7 @@ interface ScalePanelProps {
   readonly describe: (description: TrialDescription) => void;
 }
 
-/** The scale of the picture and the true frame rate: as the trial states them, to be mended for this session. */
+/** The scale of the picture and the true frame rate: as the trial states them, to be mended while the page is open. */
 export function ScalePanel({ description, measured, describe }: ScalePanelProps) {
   const { scale, captureFps } = description;
   const id = useId();
