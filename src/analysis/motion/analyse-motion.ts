@@ -1,7 +1,7 @@
 import type { Cell, DriftFinding, Paths, Scale, SpeedFinding, Warning } from "../../quantities/index.ts";
 import { median } from "../../statistics/index.ts";
-import { type Diffusion, diffusionOf, diffusionOfSwimmers, pooledDiffusion } from "./diffusion.ts";
-import { type Flow, flowOfDrifters, flowOfTurners } from "./flow.ts";
+import { bodyDiffusion, type Diffusion, diffusionOf, diffusionOfSwimmers, pooledDiffusion } from "./diffusion.ts";
+import { agree, type Flow, flowOfDrifters, flowOfTurners } from "./flow.ts";
 import { chanceOfDiffusing } from "./motile.ts";
 import { speedFinding } from "./population.ts";
 import type { MotionSettings } from "./settings.ts";
@@ -39,16 +39,8 @@ const rounds = 3;
 export function analyseMotion(paths: Paths, interval_s: number, scale: Scale | null, settings: MotionSettings): Motion {
   const tracks = Array.from({ length: paths.count }, (_, p) => trackOf(paths, p));
   const long = tracks.filter((t) => t.duration >= settings.shortestPath_s);
-  let flow: Flow | null = long.length > 0 ? flowOfDrifters(long) : null;
-  let judgement = judge(tracks, flow, settings);
-  if (!flow) {
-    const swimmers = long.filter((t) => judgement.motile[tracks.indexOf(t)]);
-    const found = flowOfTurners(swimmers, judgement.pooled);
-    if (found && known(found, swimmers)) {
-      flow = found;
-      judgement = judge(tracks, flow, settings);
-    }
-  }
+  const flow = measureFlow(tracks, long, settings);
+  const judgement = judge(tracks, flow, settings);
   const { motile, pooled, diffusers } = judgement;
   const relative = tracks.map((t) => (flow ? relativeTo(t, flow.vx, flow.vy) : t));
   const typical = relative.filter((t, i) => motile[i] && t.duration >= settings.shortestPath_s).map(netSpeed);
@@ -79,6 +71,20 @@ export function analyseMotion(paths: Paths, interval_s: number, scale: Scale | n
   };
 }
 
+/**
+ * The common flow: from cells that only diffuse where there are such, unless swimmers that turn contradict them, which
+ * tells of swimmers that happened to go alike; else from swimmers that turn. Null when neither tells.
+ */
+function measureFlow(tracks: readonly Track[], long: readonly Track[], settings: MotionSettings): Flow | null {
+  const fromDrifters = flowOfDrifters(long);
+  const { motile, pooled } = judge(tracks, null, settings);
+  const movers = tracks.filter((t, i) => motile[i] && t.duration >= settings.shortestPath_s);
+  const found = flowOfTurners(movers, pooled);
+  const fromTurners = found && known(found, movers) ? found : null;
+  if (!fromDrifters || !fromTurners) return fromDrifters ?? fromTurners;
+  return agree(fromDrifters, fromTurners) ? fromDrifters : fromTurners;
+}
+
 interface Judgement {
   readonly motile: readonly boolean[];
   readonly pooled: Diffusion;
@@ -92,7 +98,10 @@ function judge(tracks: readonly Track[], flow: Flow | null, settings: MotionSett
   const own = relative.map((t) => diffusionOf(t, flow ? "none" : "own"));
   const flowVariance = flow ? (flow.seX ** 2 + flow.seY ** 2) / 2 : 0;
   const limit = settings.falsePositiveRate / Math.max(1, tracks.length);
-  let pooled = calmestDiffusion(relative, own, settings);
+  const long = relative.filter((t) => t.duration >= settings.shortestPath_s);
+  if (long.length === 0) return { motile: tracks.map(() => false), pooled: nothingKnown, diffusers: 0 };
+  const body = bodyDiffusion(long);
+  let pooled = body.likely;
   let motile: boolean[] = [];
   let diffusers = 0;
   for (let round = 0; round < rounds; round++) {
@@ -103,21 +112,17 @@ function judge(tracks: readonly Track[], flow: Flow | null, settings: MotionSett
     if (before.length > 0 && motile.every((m, i) => m === before[i])) break;
     const swimmers = relative.filter((_, i) => motile[i]);
     const next = diffusers < fewestDiffusers ? diffusionOfSwimmers(swimmers) : pooledDiffusion(still);
-    if (next) pooled = { ...next, coefficient: Math.max(next.coefficient, 1e-6) };
+    // Swimmers taken for diffusing by mistake must not make diffusion so large that more of them are.
+    if (next) pooled = { ...next, coefficient: clamp(next.coefficient, 1e-6, body.most) };
   }
   return { motile, pooled, diffusers };
 }
 
-/** A first idea of diffusion: that of the calmest quarter of the tracks, to be corrected once swimmers are known. */
-function calmestDiffusion(tracks: readonly Track[], own: readonly Diffusion[], settings: MotionSettings): Diffusion {
-  const long = own.filter((_, i) => (tracks[i] as Track).duration >= settings.shortestPath_s);
-  const usable = long.length > 0 ? long : own;
-  if (usable.length === 0) return { coefficient: 1e-6, variance: 0, steps: 1 };
-  const calm = [...usable]
-    .sort((a, b) => a.coefficient - b.coefficient)
-    .slice(0, Math.max(1, Math.ceil(usable.length / 4)));
-  const pooled = pooledDiffusion(calm);
-  return { ...pooled, coefficient: Math.max(pooled.coefficient, 1e-6) };
+/** Diffusion where no track is long enough to show any. */
+const nothingKnown: Diffusion = { coefficient: 1e-6, variance: 0, steps: 1 };
+
+function clamp(value: number, low: number, high: number): number {
+  return Math.min(high, Math.max(low, value));
 }
 
 function known(flow: Flow, swimmers: readonly Track[]): boolean {

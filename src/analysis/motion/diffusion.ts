@@ -1,4 +1,4 @@
-import { median } from "../../statistics/index.ts";
+import { median, quantile } from "../../statistics/index.ts";
 import type { Track } from "./track.ts";
 
 /** Diffusion coefficient (pixels² per second) and variance of a position along one axis (pixels²), with steps used. */
@@ -96,5 +96,35 @@ export function diffusionOfSwimmers(tracks: readonly Track[]): Diffusion | null 
     coefficient: Math.max(1e-6, median(each.map((d) => d.coefficient))),
     variance: median(each.map((d) => d.variance)),
     steps: each.reduce((sum, d) => sum + d.steps, 0),
+  };
+}
+
+/** A first idea of how much bodies diffuse, and the most it can turn out to be once swimmers are known. */
+export interface BodyDiffusion {
+  readonly likely: Diffusion;
+  readonly most: number;
+}
+
+/**
+ * How much bodies diffuse, before it is known which of them swim: from the finest motion of all tracks, kept between a
+ * third and all of what the calmest tenth show, since the first is disturbed by noise and the second by swimming.
+ *
+ * @param tracks at least one
+ */
+export function bodyDiffusion(tracks: readonly Track[]): BodyDiffusion {
+  const own = tracks.map((track) => diffusionOf(track, "own"));
+  const calm = Math.max(
+    1e-6,
+    quantile(
+      own.map((d) => d.coefficient),
+      0.1,
+    ),
+  );
+  const fine = diffusionOfSwimmers(tracks);
+  const coefficient = Math.min(calm, Math.max(fine?.coefficient ?? 0, calm / 3));
+  const variance = median(tracks.map((track) => track.statedVariance));
+  return {
+    likely: { coefficient, variance, steps: own.reduce((sum, d) => sum + d.steps, 0) },
+    most: Math.max(3 * coefficient, 1.5 * calm),
   };
 }

@@ -1,6 +1,6 @@
 import type { DriftFinding } from "../../quantities/index.ts";
 import { median, t975 } from "../../statistics/index.ts";
-import { type Diffusion, diffusionOf } from "./diffusion.ts";
+import { bodyDiffusion, diffusionOf } from "./diffusion.ts";
 import type { Track } from "./track.ts";
 import { overallVelocity, velocitiesOf } from "./windows.ts";
 
@@ -25,6 +25,8 @@ const fewestDrifters = 3;
 const agreement = 3;
 /** Cells whose own diffusion is above this multiple of that of the calmest few turn about: they swim. */
 const calm = 4;
+/** The calmest few wander by no more than this multiple of a body's diffusion, if they only diffuse. */
+const mostOfBody = 4;
 /** Swimmers needed to tell flow from swimming. */
 const fewestTurners = 6;
 /** Windows for telling flow from swimming, seconds. */
@@ -38,16 +40,16 @@ const turnerWindow_s = 0.15;
  * scatter (Student's t).
  */
 export function flowOfDrifters(tracks: readonly Track[]): Flow | null {
-  const diffusions = tracks.map((track) => diffusionOf(track, "own"));
   if (tracks.length < fewestDrifters) return null;
-  const upper = diffusions.map((d) => Math.max(0, d.coefficient) * (1 + Math.sqrt(6 / d.steps)));
-  const calmest = [...upper].sort((a, b) => a - b)[fewestDrifters - 1] as number;
+  const spreads = tracks.map((track) => wandering(track));
+  const calmest = [...spreads].sort((a, b) => a - b)[fewestDrifters - 1] as number;
+  // Even the calmest wander more than bodies diffuse: nothing here only diffuses.
+  if (calmest > mostOfBody * bodyDiffusion(tracks).likely.coefficient) return null;
   const candidates = tracks.flatMap((track, i): Candidate[] => {
-    const d = diffusions[i] as Diffusion;
-    if (d.coefficient > calm * calmest + 1e-12) return [];
+    const coefficient = spreads[i] as number;
+    if (coefficient > calm * calmest + 1e-12) return [];
     const { vx, vy, position, diffusion } = overallVelocity(track);
-    const variance =
-      position * Math.max(track.statedVariance, d.variance) + diffusion * Math.max(d.coefficient, calmest);
+    const variance = position * track.statedVariance + diffusion * Math.max(coefficient, calmest);
     return [{ vx, vy, variance: variance + 1e-6 }];
   });
   const group = densestGroup(candidates);
@@ -65,6 +67,37 @@ export function flowOfDrifters(tracks: readonly Track[]): Flow | null {
   if (outside > members.length / 2) return null;
   const t = t975(members.length - 1);
   return flowFrom(flow.vx, flow.vy, flow.seX, flow.seY, t, members.length, "diffusing cells");
+}
+
+/** Stretches over which a swimmer's heading has had time to wander, seconds. */
+const longStretch_s = 0.4;
+
+/**
+ * Diffusion coefficient of a track about its own mean velocity, from single steps or from longer stretches, whichever is
+ * more, with allowance for its error. For a body that only diffuses both are alike; a swimmer's wandering heading makes the
+ * longer one much greater, however straight it swims from frame to frame.
+ */
+function wandering(track: Track): number {
+  const short = diffusionOf(track, "own");
+  const { t, x, y } = track;
+  const n = t.length - 1;
+  const mx = ((x[n] as number) - (x[0] as number)) / track.duration;
+  const my = ((y[n] as number) - (y[0] as number)) / track.duration;
+  let squares = 0;
+  let time = 0;
+  let stretches = 0;
+  for (let a = 0, b = 1; b <= n; b++) {
+    const h = (t[b] as number) - (t[a] as number);
+    if (h < longStretch_s - 1e-6) continue;
+    const dx = (x[b] as number) - (x[a] as number) - mx * h;
+    const dy = (y[b] as number) - (y[a] as number) - my * h;
+    squares += dx * dx + dy * dy - 4 * track.statedVariance;
+    time += h;
+    stretches++;
+    a = b;
+  }
+  const long = stretches > 1 ? (squares / (4 * time)) * (stretches / (stretches - 1)) : 0;
+  return Math.max(0, short.coefficient, long / 1.5) * (1 + Math.sqrt(6 / short.steps));
 }
 
 /** The candidates that agree with the one most agree with. */
@@ -220,4 +253,10 @@ function flowFrom(
       from,
     },
   };
+}
+
+/** Do two flows agree, within four times the error of their difference along either axis? */
+export function agree(a: Flow, b: Flow): boolean {
+  const within = (d: number, seA: number, seB: number) => d * d <= 16 * (seA * seA + seB * seB);
+  return within(a.vx - b.vx, a.seX, b.seX) && within(a.vy - b.vy, a.seY, b.seY);
 }
