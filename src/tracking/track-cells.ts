@@ -1,8 +1,10 @@
 import {
   type Beginning,
   type Context,
+  duration_s,
   type Ending,
   type Paths,
+  rowsOf,
   type Sightings,
   throwIfStopped,
 } from "../quantities/index.ts";
@@ -58,12 +60,49 @@ export function trackCells(
   }
   const pieces = follower.pieces.map((p) => p.rows);
   const joined = joinPieces(pieces, sightings, variances, times_s, motion, settings);
-  const kept = joined.filter((rows) => rows.length >= settings.fewestSightings);
+  const long = joined.filter((rows) => rows.length >= settings.fewestSightings);
+  const paths = tableOf(long, sightings, times_s, view, motion);
+  const real = withoutTraces(paths, sightings);
   return {
-    paths: tableOf(kept, sightings, times_s, view, motion),
+    paths:
+      real.length < paths.count
+        ? tableOf(
+            real.map((p) => long[p] as number[]),
+            sightings,
+            times_s,
+            view,
+            motion,
+          )
+        : paths,
     motion,
     neighbourDistance_px: index.medianNeighbourDistance(),
   };
+}
+
+/** A path fainter than this part of the usual sighting, and shorter than this, that came from nowhere is a trace. */
+const traceStrength = 0.32;
+const traceDuration_s = 1.2;
+
+/**
+ * Paths that aren't an encoder's traces of others: where a cell has passed, compressed footage keeps a shade of it for some
+ * frames, faint, out of nowhere and gone again without leaving the view. Returns the indices of the others.
+ */
+function withoutTraces(paths: Paths, sightings: Sightings): number[] {
+  if (sightings.count === 0) return [];
+  const usual = medianOf(sightings.snr);
+  return Array.from({ length: paths.count }, (_, p) => p).filter((p) => {
+    const [a, b] = rowsOf(paths, p);
+    const lasting = duration_s(paths, p) >= traceDuration_s;
+    if (lasting || paths.began[p] === "first frame" || paths.ended[p] !== "lost") return true;
+    return (
+      medianOf(Float32Array.from(paths.sighting.subarray(a, b), (row) => sightings.snr[row] as number)) >=
+      traceStrength * usual
+    );
+  });
+}
+
+function medianOf(values: Float32Array): number {
+  return values.slice().sort()[values.length >> 1] as number;
 }
 
 function tableOf(

@@ -43,7 +43,11 @@ const leastFilteredSd = 1;
  * higher in the opposite polarity isn't noise.
  */
 const highestRaised = 6.5;
-const partOfCells = 0.2;
+const partOfCells = 0.27;
+/** Above this multiple of the threshold by chance, the opposite polarity shows an encoder's artefacts, not noise. */
+const artefacts = 1.3;
+/** How much further than in the opposite polarity artefacts stand out in the cells' own. */
+const trails = 1.25;
 
 /**
  * Learns the still scene from a survey of the clip, and returns it with the whitener that finding cells uses.
@@ -281,7 +285,9 @@ function checkThreshold(
   const needed = heights.length > allowed ? heights[allowed]! + 0.05 : 0;
   const filteredSd = spreads[spreads.length >> 1]!;
   const highest = Math.max(highestRaised, (partOfCells * kind.strength) / filteredSd);
-  return { threshold: Math.max(byChance, Math.min(highest, needed)), filteredSd };
+  // Beyond noise it is the encoder that draws what isn't there, and it draws more in the cells' own polarity: their trails.
+  const wanted = needed > artefacts * byChance ? trails * needed : needed;
+  return { threshold: Math.max(byChance, Math.min(highest, wanted)), filteredSd };
 }
 
 function xy(i: number, width: number): { x: number; y: number } {
