@@ -14,7 +14,7 @@ import {
 } from "./scene.ts";
 import { type Sensor, sensor } from "./sensor.ts";
 import type { Handling } from "./shake.ts";
-import { addGaussian, type Imaging, imaging, type Spot, type Window } from "./spot.ts";
+import { addGaussian, haloWidth, type Imaging, imaging, type Spot, type Window } from "./spot.ts";
 
 /** What the camera sees of one cell in one frame. */
 export interface Look {
@@ -149,15 +149,14 @@ export class Camera {
     const spot = this.spotOf(motion, frame);
     const [dx, dy] = this.smear(motion, frame);
     const pieces = Math.min(mostPieces, Math.max(1, Math.ceil(Math.hypot(dx, dy) / finestSmear_px)));
-    const { haloStrength, haloWidth } = this.imaging;
-    const core = spot.peak / pieces / (1 - haloStrength);
+    const core = spot.peak / pieces / (1 - spot.halo);
     for (let k = 0; k < pieces; k++) {
       const along = (k + 0.5) / pieces - 0.5;
       const px = x + along * dx;
       const py = y + along * dy;
       touched.push(addGaussian(this.density, width_px, height_px, px, py, spot, core));
-      if (haloStrength > 0) {
-        touched.push(addGaussian(this.density, width_px, height_px, px, py, spot, -core * haloStrength, haloWidth));
+      if (spot.halo > 0) {
+        touched.push(addGaussian(this.density, width_px, height_px, px, py, spot, -core * spot.halo, haloWidth));
       }
     }
   }

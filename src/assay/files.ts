@@ -8,14 +8,9 @@ const scaleUncertainty = 0.002;
 
 /**
  * The trial.json of an assay: what the person filming would have written down, and nothing that only the simulator
- * knows. `clockInTrial` says whether the true rate of slow motion stands here or in the recording's own tag.
+ * knows.
  */
-export function trialJson(
-  settings: AssaySettings,
-  recording: string,
-  labels: TrialLabels,
-  clockInTrial: boolean,
-): Record<string, unknown> {
+export function trialJson(settings: AssaySettings, recording: string, labels: TrialLabels): Record<string, unknown> {
   const { picture, time, field, sample } = settings;
   const slow = time.container_fps !== null && time.container_fps !== time.fps;
   return {
@@ -27,7 +22,7 @@ export function trialJson(
       um_per_px: picture.um_per_px,
       uncertainty_um_per_px: Number((picture.um_per_px * scaleUncertainty).toPrecision(2)),
     },
-    ...(slow && clockInTrial ? { clock: { capture_fps: time.fps } } : {}),
+    ...(slow ? { clock: { capture_fps: time.fps } } : {}),
     ...(field.steps.length > 0
       ? { field: { steps: field.steps, rotation_hz: field.rotation_hz, ambient_mT: field.ambient_mT } }
       : {}),

@@ -78,6 +78,8 @@ export interface AssaySettings {
     readonly psf_um: number;
     /** Growth of the blur (standard deviation) with distance from the focal plane, µm per µm. */
     readonly defocus: number;
+    /** Strength of the ring of opposite sign round a cell far out of focus, share of its core. 0: none. */
+    readonly ring: number;
     /** Height of the focal plane over the chamber floor. Null: the middle. */
     readonly focus_um: number | null;
   };
@@ -96,6 +98,11 @@ export interface AssaySettings {
     readonly noise: number;
     /** Part of it that doesn't depend on the level. */
     readonly readNoise: number;
+    /**
+     * Weight of each of the two neighbours a pixel's noise is averaged with along either axis (itself: 1 - 2 × grain):
+     * 0 is independent noise, 0.2 what a phone's own smoothing leaves (by eye). The size of the noise stays the same.
+     */
+    readonly grain: number;
     /** Slow swing of the exposure gain, fraction. */
     readonly gainDrift: number;
     /** Sudden change of the gain half-way through the clip, fraction (0.1: a tenth brighter). */
@@ -161,10 +168,11 @@ export const defaultSettings: AssaySettings = {
     bodyWidth_um: 1,
     psf_um: 0.45,
     defocus: 0.06,
+    ring: 0.3,
     focus_um: null,
   },
   light: { level: 165, vignette: 0.25, eyepiece: null, black: 5 },
-  sensor: { noise: 2, readNoise: 0.7, gainDrift: 0, gainStep: 0 },
+  sensor: { noise: 2, readNoise: 0.7, grain: 0.12, gainDrift: 0, gainStep: 0 },
   phone: { shake_px: 0, shakes: "phone", bump_px: 0 },
   visibleAt: 3,
 };

@@ -25,7 +25,7 @@ export const assayPresets: Readonly<Record<string, Preset>> = {
   demo: {
     about: "the bundled demo: a phone at the eyepiece, a field that reverses twice",
     labels: { trial: "D01", strain: "QK-11", culture: "C2", condition: "22 C, fresh medium" },
-    encoding: { crf: 24, preset: "slow" },
+    encoding: { crf: 19, preset: "medium" },
     options: {
       seed: 20260412,
       picture: { width_px: 960, height_px: 720, um_per_px: 0.432 },

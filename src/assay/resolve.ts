@@ -37,10 +37,11 @@ const bounds: { readonly [S in Sections]?: Readonly<Record<string, readonly [num
     bodyWidth_um: [0.1, 50],
     psf_um: [0.05, 20],
     defocus: [0, 2],
+    ring: [0, 0.8],
     focus_um: [-1000, 2000],
   },
   light: { level: [1, 250], vignette: [0, 0.9], eyepiece: [0.1, 3], black: [0, 100] },
-  sensor: { noise: [0, 50], readNoise: [0, 50], gainDrift: [0, 0.5], gainStep: [-0.5, 0.5] },
+  sensor: { noise: [0, 50], readNoise: [0, 50], grain: [0, 0.33], gainDrift: [0, 0.5], gainStep: [-0.5, 0.5] },
   phone: { shake_px: [0, 30], bump_px: [-60, 60] },
 };
 
@@ -53,6 +54,7 @@ const sections = Object.keys(bounds) as Sections[];
 export function resolveOptions(options: AssayOptions): AssaySettings {
   const settings = { ...defaultSettings, ...options } as unknown as Record<string, unknown>;
   for (const section of sections) settings[section] = { ...defaultSettings[section], ...options[section] };
+  refuseUnknown(settings);
   const whole = settings as unknown as AssaySettings;
   if (!Number.isInteger(whole.seed) || whole.seed < 0 || whole.seed > 0xffffffff) {
     reject("seed", whole.seed, "a whole number from 0 to 4294967295");
@@ -84,6 +86,22 @@ export function resolveOptions(options: AssayOptions): AssaySettings {
     if (!fine) reject("field.steps", JSON.stringify(step), "steps of finite numbers with a magnitude of 0 or more");
   }
   return whole;
+}
+
+/** A misspelt name must not pass as a setting left out. */
+function refuseUnknown(settings: Record<string, unknown>): void {
+  for (const [section, values] of Object.entries(settings)) {
+    if (!Object.hasOwn(defaultSettings, section)) rejectName(section, Object.keys(defaultSettings));
+    if (typeof values !== "object") continue;
+    const known = Object.keys(defaultSettings[section as Sections]);
+    for (const name of Object.keys(values as object)) {
+      if (!known.includes(name)) rejectName(`${section}.${name}`, known);
+    }
+  }
+}
+
+function rejectName(where: string, known: readonly string[]): never {
+  throw new InputError("assay-option", `There is no setting ${where}.`, where, `Use one of ${known.join(", ")}.`);
 }
 
 function reject(where: string, given: unknown, wanted: string): never {

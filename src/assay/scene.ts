@@ -113,7 +113,7 @@ export function scatterDebris(settings: AssaySettings, pad: number): Piece[] {
 export function drawDebris(layer: Layer, pieces: readonly Piece[]): void {
   for (const { grains } of pieces) {
     for (const { x_px, y_px, sigma_px, density } of grains) {
-      const spot = { peak: density, cxx: sigma_px ** 2, cxy: 0, cyy: sigma_px ** 2 };
+      const spot = { cxx: sigma_px ** 2, cxy: 0, cyy: sigma_px ** 2 };
       addGaussian(layer.values, layer.width, layer.height, x_px + layer.pad, y_px + layer.pad, spot, density);
     }
   }

@@ -42,7 +42,7 @@ export function handling(
   return {
     shift_px: (t) => [x(t) - x0 + knock(t), y(t) - y0 + 0.5 * knock(t)],
     gain,
-    reach_px: Math.ceil(2 * phone.shake_px * Math.sqrt(2 * tones) + phone.bump_px),
+    reach_px: Math.ceil(2 * phone.shake_px * Math.sqrt(2 * tones) + Math.abs(phone.bump_px)),
   };
 }
 

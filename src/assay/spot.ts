@@ -1,30 +1,37 @@
 import type { AssaySettings } from "./options.ts";
 
-/** A Gaussian spot on the picture: peak and covariance in pixels. */
-export interface Spot {
-  /** Optical density at the peak, natural logarithm; negative brightens. */
-  readonly peak: number;
+/** A Gaussian on the picture: covariance in pixels. */
+export interface Shape {
   readonly cxx: number;
   readonly cxy: number;
   readonly cyy: number;
+}
+
+/** A cell's spot: a Gaussian core, less a wider Gaussian of the same shape that makes the halo or ring. */
+export interface Spot extends Shape {
+  /** Optical density at the peak, natural logarithm; negative brightens. */
+  readonly peak: number;
+  /** Share of the core that the halo takes away at the centre. 0: no halo. */
+  readonly halo: number;
 }
 
 /** How a cell's picture is made: a rod's own spread, the optics' blur, and the sign and halo of its contrast. */
 export interface Imaging {
   /** The spot of a cell with direction (nx, ny) in the picture (y down), height over focus, and in-focus contrast. */
   spot(nx: number, ny: number, height_um: number, contrast: number): Spot;
-  /** Width of the halo over the core, and its strength; strength 0: no halo. */
-  readonly haloWidth: number;
-  readonly haloStrength: number;
 }
 
-/** Phase contrast: a halo of twice the core's width whose sign is the other one. Shape by eye: common practice, no source. */
-const phaseHalo = { width: 2, strength: 0.4 };
+/** Width of the halo over the core's. Shapes of halo and ring by eye: common practice, no source. */
+export const haloWidth = 2;
+
+/** Strength of the halo in phase contrast. */
+const phaseHalo = 0.4;
 
 /**
  * Spots of rods of uniform density: variance length²/12 along the axis (shortened by how far the rod points out of
  * the picture) and width²/12 across it, widened by the point spread and by a blur that grows with the distance from
- * focus. A wider spot is fainter: absorbance adds up to the same whatever the focus.
+ * focus. A wider spot is fainter: the core's absorbance adds up to the same whatever the focus. Phase contrast has a
+ * halo of the other sign always; without it a ring of the other sign comes up as the blur outgrows the point spread.
  */
 export function imaging(optics: AssaySettings["optics"], um_per_px: number): Imaging {
   const perPx2 = 1 / um_per_px ** 2;
@@ -34,15 +41,15 @@ export function imaging(optics: AssaySettings["optics"], um_per_px: number): Ima
   const sharpest = Math.sqrt((long + psf) * (wide + psf));
   const sign = optics.polarity === "bright" ? -1 : 1;
   return {
-    haloWidth: phaseHalo.width,
-    haloStrength: optics.polarity === "phase" ? phaseHalo.strength : 0,
     spot(nx, ny, height_um, contrast) {
-      const blur = psf + (optics.defocus * height_um) ** 2 * perPx2;
+      const defocus = (optics.defocus * height_um) ** 2 * perPx2;
+      const blur = psf + defocus;
       const cxx = wide + (long - wide) * nx * nx + blur;
       const cyy = wide + (long - wide) * ny * ny + blur;
       const cxy = (long - wide) * nx * ny;
       const density = sign > 0 ? -Math.log(1 - contrast) : -Math.log(1 + contrast);
-      return { peak: (density * sharpest) / Math.sqrt(cxx * cyy - cxy * cxy), cxx, cxy, cyy };
+      const halo = optics.polarity === "phase" ? phaseHalo : (optics.ring * defocus) / blur;
+      return { peak: (density * sharpest) / Math.sqrt(cxx * cyy - cxy * cxy), halo, cxx, cxy, cyy };
     },
   };
 }
@@ -65,7 +72,7 @@ export function addGaussian(
   height: number,
   x: number,
   y: number,
-  spot: Spot,
+  spot: Shape,
   peak: number,
   scale = 1,
 ): Window {

@@ -1,6 +1,7 @@
 #!/usr/bin/env node
 import { InputError } from "../quantities/index.ts";
 import { usageError } from "./arguments.ts";
+import { assay, help as assayHelp } from "./commands/assay.ts";
 import { measure, help as measureHelp } from "./commands/measure.ts";
 import { workbench, help as workbenchHelp } from "./commands/workbench.ts";
 import type { Io } from "./io.ts";
@@ -19,6 +20,11 @@ const commands: Readonly<Record<string, Command>> = {
     about: "serve the workbench to this computer's browser",
     help: workbenchHelp,
     run: (args, _, io) => workbench(args, io),
+  },
+  assay: {
+    about: "make a synthetic trial whose truth is known",
+    help: assayHelp,
+    run: (args, _, io) => assay(args, io),
   },
 };
 

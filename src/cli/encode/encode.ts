@@ -128,7 +128,12 @@ function codecArguments({ codec, crf, preset, keyframeEvery }: EncodeOptions): s
     case "h264":
       return ["-c:v", "libx264", "-preset", preset, "-crf", `${crf}`, ...keys, "-pix_fmt", "yuv420p", "-f", "mp4"];
     case "hevc": {
-      const quiet = ["-x265-params", "pools=none:frame-threads=1:wpp=0:pmode=0:pme=0:lookahead-slices=0:log-level=error:info=0", "-tag:v", "hvc1"];
+      const quiet = [
+        "-x265-params",
+        "pools=none:frame-threads=1:wpp=0:pmode=0:pme=0:lookahead-slices=0:log-level=error:info=0",
+        "-tag:v",
+        "hvc1",
+      ];
       return ["-c:v", "libx265", "-preset", preset, "-crf", `${crf}`, ...keys, ...quiet, "-f", "mp4"];
     }
     case "vp9": {
