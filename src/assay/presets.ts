@@ -113,6 +113,6 @@ export const assayPresets: Readonly<Record<string, Preset>> = {
   },
   "deep-chamber": {
     about: "cells drifting in and out of focus",
-    options: { sample: { depth_um: 90 }, optics: { defocus: 0.12 } },
+    options: { sample: { depth_um: 90 }, swimmers: { cells: 80 }, optics: { defocus: 0.09 } },
   },
 };
