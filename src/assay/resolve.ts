@@ -52,6 +52,12 @@ const sections = Object.keys(bounds) as Sections[];
  * @throws InputError naming the option, its bounds and what was given.
  */
 export function resolveOptions(options: AssayOptions): AssaySettings {
+  for (const section of sections) {
+    const given: unknown = options[section];
+    if (given !== undefined && (typeof given !== "object" || given === null || Array.isArray(given))) {
+      reject(section, given, "a section of named settings");
+    }
+  }
   const settings = { ...defaultSettings, ...options } as unknown as Record<string, unknown>;
   for (const section of sections) settings[section] = { ...defaultSettings[section], ...options[section] };
   refuseUnknown(settings);
@@ -78,9 +84,15 @@ export function resolveOptions(options: AssayOptions): AssaySettings {
   if (!["dark", "bright", "phase"].includes(whole.optics.polarity)) {
     reject("optics.polarity", whole.optics.polarity, "dark, bright or phase");
   }
-  for (const vector of [whole.sample.flow_um_s, whole.field.ambient_mT]) {
-    if (vector.length !== 2 || !vector.every(Number.isFinite)) reject("flow or ambient field", vector, "two numbers");
+  for (const [where, vector] of [
+    ["sample.flow_um_s", whole.sample.flow_um_s],
+    ["field.ambient_mT", whole.field.ambient_mT],
+  ] as const) {
+    if (!Array.isArray(vector) || vector.length !== 2 || !vector.every(Number.isFinite)) {
+      reject(where, vector, "two numbers");
+    }
   }
+  if (!Array.isArray(whole.field.steps)) reject("field.steps", whole.field.steps, "a list of steps");
   for (const step of whole.field.steps) {
     const fine = [step.t_s, step.magnitude_mT, step.angle_deg].every(Number.isFinite) && step.magnitude_mT >= 0;
     if (!fine) reject("field.steps", JSON.stringify(step), "steps of finite numbers with a magnitude of 0 or more");
