@@ -108,7 +108,7 @@ describe("the kernels do what they say", () => {
     const network = sortingNetwork();
     const random = seededRandom(5);
     for (let trial = 0; trial < 2000; trial++) {
-      const v = Array.from({ length: stackSize }, () => (random() < 0.5 ? 0 : 1));
+      const v: number[] = Array.from({ length: stackSize }, () => (random() < 0.5 ? 0 : 1));
       for (let c = 0; c < network.length; c += 2) {
         const [a, b] = [network[c]!, network[c + 1]!];
         if (v[a]! > v[b]!) [v[a], v[b]] = [v[b]!, v[a]!];
