@@ -18,5 +18,6 @@ export function wilsonInterval(successes: number, n: number): Interval {
   const p = successes / n;
   const middle = (p + z2 / (2 * n)) / (1 + z2 / n);
   const half = (z975 * Math.sqrt((p * (1 - p)) / n + z2 / (4 * n * n))) / (1 + z2 / n);
-  return [Math.max(0, middle - half), Math.min(1, middle + half)];
+  // Exactly 0 and 1 at the ends, where middle and half are equal but for rounding.
+  return [successes === 0 ? 0 : Math.max(0, middle - half), successes === n ? 1 : Math.min(1, middle + half)];
 }

@@ -1,7 +1,7 @@
 /**
  * Expected number of maxima above a threshold in smooth normal noise: the Euler characteristic density of a
+ * two-dimensional normal field (R. J. Adler 1981, "The Geometry of Random Fields"),
  *
-
  *     N(t) = area · λ · (2π)^(-3/2) · t · exp(-t²/2),   λ = 1/(2σ²) for white noise smoothed with a Gaussian of σ.
  */
 export function expectedFalseAlarms(threshold: number, area_px2: number, smoothing_px: number): number {
