@@ -38,10 +38,11 @@ export function diffusionOf(track: Track, drift: "own" | "none"): Diffusion {
   }
   square /= 2 * n;
   product /= 2 * Math.max(1, n - 1);
-  if (drift === "own" && n > 1) {
-    // Taking off the mean takes 1/n of the variance from the squares and as much from the products.
-    square *= n / (n - 1);
-    product += square / n;
+  if (drift === "own" && n > 3) {
+    // Taking off the mean takes its variance, a step's square and twice its product over n, from squares and products.
+    const taken = (square + 2 * product) / (n - 3);
+    square += taken;
+    product += taken;
   }
   const dt = track.duration / n;
   return { coefficient: square / (2 * dt) + product / dt, variance: -product, steps: n };

@@ -1,4 +1,5 @@
 import type { Diffusion } from "./diffusion.ts";
+import { meanSpeedVariance } from "./speed-error.ts";
 import type { Track } from "./track.ts";
 import { type Velocities, velocitiesOf } from "./windows.ts";
 
@@ -17,8 +18,8 @@ export interface PathSpeed {
  * great by about s² / 2v (S. O. Rice 1945, Bell Syst. Tech. J. 24, 46), which is taken off window by window as
  * √(v² − s²) where a window tells its speed well, and in the mean of squares where none does.
  *
- * The standard error holds what diffusion and localisation do to the mean along the whole path (windows overlap, so that
- * the errors of inner positions cancel) and the error of the flow. Null when the path has no full window.
+ * The standard error holds what diffusion and localisation do to the mean along the whole path and the error of the flow.
+ * Null when the path has no full window.
  *
  * @param noise variance of a position along one axis (pixels²) and diffusion coefficient (pixels² per second)
  * @param flowVariance variance of the flow along one axis, (pixels per second)²
@@ -33,7 +34,7 @@ export function pathSpeed(
   if (v.t.length === 0) return null;
   const speed = correctedMean(v, noise);
   const length = Math.max(track.duration, 1e-9);
-  const variance = (2 * noise.coefficient) / length + (2 * noise.variance) / length ** 2 + flowVariance;
+  const variance = meanSpeedVariance(track, v, noise) + flowVariance;
   const n = track.t.length - 1;
   const dx = (track.x[n] as number) - (track.x[0] as number);
   const dy = (track.y[n] as number) - (track.y[0] as number);

@@ -7,27 +7,37 @@ export interface Velocities {
   readonly vy: readonly number[];
   /** Variance of each component: `position` times the variance of a position plus `diffusion` times the coefficient. */
   readonly noise: readonly { readonly position: number; readonly diffusion: number }[];
+  /** Points of the track that each window took in: the first, and one past the last. */
+  readonly spans: readonly (readonly [first: number, end: number])[];
 }
 
 /**
  * Velocity at every point of a track as the slope of a straight line fitted to the points within half a window on
  * either side, at their own times. For equal steps these are the first-derivative filters of Savitzky and Golay 1964,
- * Anal. Chem. 36, 1627. Points without a full window, or with fewer than two others in it, have none.
- *
- * @param stride every how many points a window is taken: 1 for all
+ * Anal. Chem. 36, 1627. Where frames are far apart, as in dim light, a window takes in the next point on either side if
+ * that is within a whole window. Points without a full window, or still with fewer than two others in it, have none.
  */
-export function velocitiesOf(track: Track, window_s: number, stride = 1): Velocities {
+export function velocitiesOf(track: Track, window_s: number): Velocities {
   const { t, x, y } = track;
   const n = t.length;
   const half = window_s / 2 + 1e-9;
-  const out = { t: [] as number[], vx: [] as number[], vy: [] as number[], noise: [] as Velocities["noise"][number][] };
-  let first = 0;
-  for (let i = 0; i < n; i += stride) {
+  const out = {
+    t: [] as number[],
+    vx: [] as number[],
+    vy: [] as number[],
+    noise: [] as Velocities["noise"][number][],
+    spans: [] as Velocities["spans"][number][],
+  };
+  const within = (j: number, now: number) => j >= 0 && j < n && Math.abs((t[j] as number) - now) <= 2 * half;
+  let from = 0;
+  for (let i = 0; i < n; i++) {
     const now = t[i] as number;
     if (now - (t[0] as number) < half - 2e-9 || (t[n - 1] as number) - now < half - 2e-9) continue;
-    while ((t[first] as number) < now - half) first++;
-    let end = i;
+    while ((t[from] as number) < now - half) from++;
+    const first = from === i && within(i - 1, now) ? i - 1 : from;
+    let end = i + 1;
     while (end < n && (t[end] as number) <= now + half) end++;
+    if (end === i + 1 && within(i + 1, now)) end++;
     if (end - first < 3) continue;
     let mean = 0;
     for (let j = first; j < end; j++) mean += t[j] as number;
@@ -45,6 +55,7 @@ export function velocitiesOf(track: Track, window_s: number, stride = 1): Veloci
     out.vx.push(sx / spread);
     out.vy.push(sy / spread);
     out.noise.push({ position: 1 / spread, diffusion: brownianGain(t, first, end, mean, spread) });
+    out.spans.push([first, end]);
   }
   return out;
 }
