@@ -127,8 +127,9 @@ function tileMean(
   bottom: number,
 ): number {
   const lit: number[] = [];
-  for (let y = Math.floor(top * height); y < Math.floor(bottom * height); y++) {
-    for (let x = Math.floor(left * width); x < Math.floor(right * width); x++) {
+  // Every other pixel of every other row, shifted by turns: four hundred of a tile tell its noise to a few per cent.
+  for (let y = Math.floor(top * height); y < Math.floor(bottom * height); y += 2) {
+    for (let x = Math.floor(left * width) + ((y >> 1) & 1); x < Math.floor(right * width); x += 2) {
       if (level[y * width + x]! > darkLevel) lit.push(y * width + x);
     }
   }

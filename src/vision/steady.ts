@@ -199,7 +199,14 @@ function levelAt(t: Texture, luma: Uint8Array, at: number, dx: number, dy: numbe
   return top + ay * (bottom - top);
 }
 
+/** Points that the spread of residuals is read from. */
+const spreadPoints = 400;
+
+/** Median size of the residuals, from some of them. */
 function medianAbsolute(r: Float32Array): number {
-  const a = Float32Array.from(r, Math.abs).sort();
-  return a.length ? a[a.length >> 1]! : 0;
+  const every = Math.max(1, Math.floor(r.length / spreadPoints));
+  const some = new Float32Array(Math.ceil(r.length / every));
+  for (let i = 0, k = 0; i < r.length; i += every, k++) some[k] = Math.abs(r[i]!);
+  some.sort();
+  return some.length > 0 ? some[some.length >> 1]! : 0;
 }
