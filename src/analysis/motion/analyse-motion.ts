@@ -95,7 +95,7 @@ interface Judgement {
 /** Which tracks move more than diffusion and flow explain; the diffusion is learnt from those that don't. */
 function judge(tracks: readonly Track[], flow: Flow | null, settings: MotionSettings): Judgement {
   const relative = tracks.map((t) => (flow ? relativeTo(t, flow.vx, flow.vy) : t));
-  const own = relative.map((t) => diffusionOf(t, flow ? "none" : "own"));
+  const own = relative.map((t) => diffusionOf(t, "own"));
   const flowVariance = flow ? (flow.seX ** 2 + flow.seY ** 2) / 2 : 0;
   const limit = settings.falsePositiveRate / Math.max(1, tracks.length);
   const long = relative.filter((t) => t.duration >= settings.shortestPath_s);
@@ -164,7 +164,8 @@ function cellOf(p: number, track: Track, motile: boolean, speed: PathSpeed | nul
     motile: motile ? true : followed ? false : null,
     speed_px_s: speed?.speed ?? null,
     speedSe_px_s: speed?.standardError ?? null,
-    straightness: speed?.straightness ?? null,
+    // Of a body that only diffuses, net displacement over swum length says nothing.
+    straightness: motile ? (speed?.straightness ?? null) : null,
     kept,
     reason: kept ? "" : !followed ? `followed for less than ${settings.shortestPath_s} s` : reasonNot(motile),
   };

@@ -48,6 +48,16 @@ export function diffusionOf(track: Track, drift: "own" | "none"): Diffusion {
   return { coefficient: square / (2 * dt) + product / dt, variance: -product, steps: n };
 }
 
+/**
+ * Standard error of a track's covariance-based estimate, both axes together, were its diffusion coefficient so much.
+ * Source: Vestergaard, Blainey and Flyvbjerg 2014, Phys. Rev. E 89, 022726, leading order in the number of steps.
+ */
+export function diffusionError(track: Track, coefficient: number): number {
+  const steps = track.t.length - 1;
+  const noise = (track.statedVariance * steps) / track.duration;
+  return Math.sqrt((6 * coefficient ** 2 + 4 * coefficient * noise + 2 * noise ** 2) / (2 * steps));
+}
+
 /** Diffusion of several tracks together: the median, each track counting by its steps, so that a stray swimmer is no matter. */
 export function pooledDiffusion(all: readonly Diffusion[]): Diffusion {
   return {
@@ -114,14 +124,13 @@ export interface BodyDiffusion {
  */
 export function bodyDiffusion(tracks: readonly Track[]): BodyDiffusion {
   const own = tracks.map((track) => diffusionOf(track, "own"));
-  const calm = Math.max(
-    1e-6,
-    quantile(
-      own.map((d) => d.coefficient),
-      0.1,
-    ),
-  );
   const fine = diffusionOfSwimmers(tracks);
+  // Each with its error added: among many short tracks the calmest are only those that err the most.
+  const allowing = own.map(
+    ({ coefficient }, i) =>
+      coefficient + diffusionError(tracks[i] as Track, Math.max(coefficient, fine?.coefficient ?? 0)),
+  );
+  const calm = Math.max(1e-6, quantile(allowing, 0.1));
   const coefficient = Math.min(calm, Math.max(fine?.coefficient ?? 0, calm / 3));
   const variance = median(tracks.map((track) => track.statedVariance));
   return {

@@ -1,6 +1,6 @@
 import type { DriftFinding } from "../../quantities/index.ts";
 import { median, t975 } from "../../statistics/index.ts";
-import { bodyDiffusion, diffusionOf } from "./diffusion.ts";
+import { bodyDiffusion, diffusionError, diffusionOf, diffusionOfSwimmers } from "./diffusion.ts";
 import type { Track } from "./track.ts";
 import { overallVelocity, velocitiesOf } from "./windows.ts";
 
@@ -41,7 +41,8 @@ const turnerWindow_s = 0.15;
  */
 export function flowOfDrifters(tracks: readonly Track[]): Flow | null {
   if (tracks.length < fewestDrifters) return null;
-  const spreads = tracks.map((track) => wandering(track));
+  const usual = diffusionOfSwimmers(tracks)?.coefficient ?? 0;
+  const spreads = tracks.map((track) => wandering(track, usual));
   const calmest = [...spreads].sort((a, b) => a - b)[fewestDrifters - 1] as number;
   // Even the calmest wander more than bodies diffuse: nothing here only diffuses.
   if (calmest > mostOfBody * bodyDiffusion(tracks).likely.coefficient) return null;
@@ -74,10 +75,12 @@ const longStretch_s = 0.4;
 
 /**
  * Diffusion coefficient of a track about its own mean velocity, from single steps or from longer stretches, whichever is
- * more, with allowance for its error. For a body that only diffuses both are alike; a swimmer's wandering heading makes the
- * longer one much greater, however straight it swims from frame to frame.
+ * more, plus its standard error, so that short tracks that happen to look calm aren't the measure of all others. For a body that only diffuses both are alike; a swimmer's
+ * wandering heading makes the longer one much greater, however straight it swims from frame to frame.
+ *
+ * @param usual what bodies of this clip diffuse by, near enough to tell the error
  */
-function wandering(track: Track): number {
+function wandering(track: Track, usual: number): number {
   const short = diffusionOf(track, "own");
   const { t, x, y } = track;
   const n = t.length - 1;
@@ -97,7 +100,7 @@ function wandering(track: Track): number {
     a = b;
   }
   const long = stretches > 1 ? (squares / (4 * time)) * (stretches / (stretches - 1)) : 0;
-  return Math.max(0, short.coefficient, long / 1.5) * (1 + Math.sqrt(6 / short.steps));
+  return Math.max(0, short.coefficient, long / 1.5) + diffusionError(track, Math.max(short.coefficient, usual));
 }
 
 /** The candidates that agree with the one most agree with. */
