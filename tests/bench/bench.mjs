@@ -22,7 +22,7 @@ async function ownClip() {
   if (existsSync(made)) return made;
   console.log("Making a clip: 20 s of 1280 × 720 with grain (this takes a few minutes, once).");
   await build({ configFile: join(root, "src/cli/vite.config.ts"), logLevel: "error" });
-  const options = ["--preset", "plain", "--seconds", "20", "--crf", "14", "--out", folder, "--replace"];
+  const options = ["--preset", "plain", "--set", "time.seconds=20", "--quality", "14", "--out", folder, "--replace"];
   execFileSync(process.execPath, [join(root, "dist/cli/main.js"), "assay", ...options], { stdio: "inherit" });
   return made;
 }

@@ -28,7 +28,8 @@ export function chanceOfDiffusing(track: Track, own: Diffusion, pooled: Diffusio
   const variance = Math.max(0, track.statedVariance, pooled.variance);
   const dt = track.duration / own.steps;
   const e = variance / (Math.max(coefficient, 1e-12) * dt);
-  const freedom = Math.max(4, (2 * Math.min(steps, own.steps + pooled.steps)) / (6 + 4 * e + 2 * e * e));
+  // Twice the squared mean over the variance, which two axes halve.
+  const freedom = Math.max(4, (4 * Math.min(steps, own.steps + pooled.steps)) / (6 + 4 * e + 2 * e * e));
   let least = 1;
   let tests = 0;
   for (let parts = 1; track.duration / parts >= shortestStretch_s; parts *= 2) {
