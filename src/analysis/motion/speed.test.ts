@@ -54,7 +54,7 @@ describe("speed along a path", () => {
     expect(Math.abs(mean(speeds) - speed)).toBeLessThan(3 * errorOf(speeds) + 0.005 * speed);
   });
 
-  it.each([30, 60, 120, 240])("at %d frames/s has 95 %% intervals that hold the truth as often as they say", (fps) => {
+  it.each([30, 60, 120, 240])("at %d frames/s has intervals that hold the truth as often as they say", (fps) => {
     const walker = { speed: 50, diffusion: 0.245, sigma: 0.2 };
     const { coverage } = simulate(walker, [evenTimes(1, fps)], 1 / fps, 1000, 7 + fps);
     // The binomial standard error at 1000 runs is 0.7 %, so that 3 % is more than 4 of them.

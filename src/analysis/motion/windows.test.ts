@@ -13,7 +13,7 @@ describe("velocities over windows", () => {
   // First-derivative weights of second order, Savitzky and Golay 1964, Anal. Chem. 36, 1627: k / Σk². The gain is the
   // standard deviation of the derivative for positions of standard deviation 1 and unit steps.
   it.each([
-    [3, [-1, 0, 1], 2, 0.707106781],
+    [3, [-1, 0, 1], 2, Math.SQRT1_2],
     [5, [-2, -1, 0, 1, 2], 10, 0.316227766],
     [7, [-3, -2, -1, 0, 1, 2, 3], 28, 0.188982237],
   ])("of %d points are the Savitzky–Golay derivative", (points, weights, over, gain) => {
