@@ -53,7 +53,7 @@ export function flowOfDrifters(tracks: readonly Track[]): Flow | null {
     const variance = position * track.statedVariance + diffusion * Math.max(coefficient, calmest);
     return [{ vx, vy, variance: variance + 1e-6 }];
   });
-  const group = densestGroup(candidates);
+  const group = tightestGroup(candidates);
   if (!group) return null;
   let flow = weightedMean(group);
   let members = group;
@@ -63,8 +63,10 @@ export function flowOfDrifters(tracks: readonly Track[]): Flow | null {
     flow = weightedMean(members);
   }
   // Around a flow there is next to nothing; among swimmers that happen to swim alike there are more just outside.
-  const outside =
-    candidates.filter((c) => distance2(c, flow) <= 9 * 2 * agreement ** 2 * c.variance).length - members.length;
+  const usualVariance = median(members.map((m) => m.variance));
+  const outside = candidates.filter(
+    (c) => !members.includes(c) && distance2(c, flow) <= 9 * 2 * agreement ** 2 * usualVariance,
+  ).length;
   if (outside > members.length / 2) return null;
   const t = t975(members.length - 1);
   return flowFrom(flow.vx, flow.vy, flow.seX, flow.seY, t, members.length, "diffusing cells");
@@ -75,8 +77,9 @@ const longStretch_s = 0.4;
 
 /**
  * Diffusion coefficient of a track about its own mean velocity, from single steps or from longer stretches, whichever is
- * more, plus its standard error, so that short tracks that happen to look calm aren't the measure of all others. For a body that only diffuses both are alike; a swimmer's
- * wandering heading makes the longer one much greater, however straight it swims from frame to frame.
+ * more, plus its standard error, so that short tracks that happen to look calm aren't the measure of all others. For a
+ * body that only diffuses both are alike; a swimmer's wandering heading makes the longer one much greater, however
+ * straight it swims from frame to frame.
  *
  * @param usual what bodies of this clip diffuse by, near enough to tell the error
  */
@@ -103,14 +106,22 @@ function wandering(track: Track, usual: number): number {
   return Math.max(0, short.coefficient, long / 1.5) + diffusionError(track, Math.max(short.coefficient, usual));
 }
 
-/** The candidates that agree with the one most agree with. */
-function densestGroup(candidates: readonly Candidate[]): Candidate[] | null {
-  let best: Candidate[] = [];
+/**
+ * The group of candidates that agree with one of them and together tell a velocity best: cells followed long enough to agree
+ * closely, not the many short paths that agree with anything.
+ */
+function tightestGroup(candidates: readonly Candidate[]): Candidate[] | null {
+  let best: Candidate[] | null = null;
+  let most = 0;
   for (const centre of candidates) {
     const near = candidates.filter((c) => distance2(c, centre) <= agreement ** 2 * (c.variance + centre.variance));
-    if (near.length > best.length) best = near;
+    const weight = near.reduce((sum, c) => sum + 1 / c.variance, 0);
+    if (near.length >= fewestDrifters && weight > most) {
+      best = near;
+      most = weight;
+    }
   }
-  return best.length >= fewestDrifters ? best : null;
+  return best;
 }
 
 function distance2(

@@ -83,6 +83,7 @@ export function chooseWindow_s(
     const position = noise.variance / (interval_s ** 2 * ((half * (half + 1) * (2 * half + 1)) / 3));
     const variance = position + (1.2 * 2 * Math.max(0, noise.coefficient)) / window;
     const quiet = variance < (0.15 * typicalSpeed) ** 2;
-    if (quiet || window + 2 * interval_s > longest_s) return window * 1.02;
+    // A little wider than the points are apart, so that jitter doesn't cut them off; rounded, since it is written down.
+    if (quiet || window + 2 * interval_s > longest_s) return Math.round(window * 1.02e6) / 1e6;
   }
 }
