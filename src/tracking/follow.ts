@@ -3,6 +3,7 @@ import { assign, type Pairing } from "./assignment.ts";
 import type { FrameIndex } from "./frame-index.ts";
 import { type Belief, firstBelief, type MotionModel, predict, update } from "./motion-model.ts";
 import type { TrackingSettings } from "./settings.ts";
+import { type TrackingView, toEdge } from "./view.ts";
 
 /** A cell being followed: the sightings taken for it so far, and what is believed of it. */
 export interface Piece {
@@ -56,6 +57,7 @@ export class Follower {
   private readonly settings: TrackingSettings;
   private readonly frameInterval_s: number;
   private readonly usualMajor: number;
+  private readonly view: TrackingView;
   private live: Piece[] = [];
   readonly pieces: Piece[] = [];
 
@@ -66,6 +68,7 @@ export class Follower {
     model: MotionModel,
     settings: TrackingSettings,
     frameInterval_s: number,
+    view: TrackingView,
   ) {
     this.sightings = sightings;
     this.variances = variances;
@@ -74,6 +77,7 @@ export class Follower {
     this.settings = settings;
     this.frameInterval_s = frameInterval_s;
     this.usualMajor = usualMajor_px(sightings);
+    this.view = view;
   }
 
   /** Takes in one frame. Frames must come in order. */
@@ -152,7 +156,10 @@ export class Follower {
     return missed.filter((cell) => !paired.has(cell));
   }
 
-  /** A cell that turned sharply lies within a circle of what it can swim about where it was last seen. */
+  /**
+   * A cell that turned sharply lies within a circle of what it can swim about where it was last seen. One that was about to
+   * leave the view has left it: what comes in near there is another.
+   */
   private pairAfterSharpTurns(
     frame: number,
     missed: readonly number[],
@@ -165,6 +172,8 @@ export class Follower {
     for (const cell of missed) {
       const { rows, belief } = this.live[cell] as Piece;
       if (rows.length < knownAfter) continue;
+      const { x, y } = predicted[cell] as Belief;
+      if (toEdge(this.view, x, y) < 0) continue;
       const waited = (predicted[cell] as Belief).t_s - belief.t_s;
       const { pace2 } = predicted[cell] as Belief;
       const speed = Math.sqrt(pace2);

@@ -3,6 +3,7 @@ import { Follower, type Piece } from "./follow.ts";
 import type { FrameIndex } from "./frame-index.ts";
 import type { MotionModel } from "./motion-model.ts";
 import type { TrackingSettings } from "./settings.ts";
+import type { TrackingView } from "./view.ts";
 
 /** Pieces of fewer sightings teach nothing about motion. */
 const teachesFrom = 8;
@@ -47,14 +48,14 @@ export function learnMotion(
   guess: MotionModel,
   settings: TrackingSettings,
   frameInterval_s: number,
-  area_px2: number,
+  view: TrackingView,
 ): MotionModel {
   let model = guess;
   const frames = Math.min(times_s.length, framesThatTeach);
   for (let round = 0; round < rounds; round++) {
-    const follower = new Follower(sightings, variances, index, model, settings, frameInterval_s);
+    const follower = new Follower(sightings, variances, index, model, settings, frameInterval_s, view);
     for (let f = 0; f < frames; f++) follower.frame(f, times_s[f] as number);
-    model = improve(model, follower.pieces, sightings, times_s, frames, area_px2);
+    model = improve(model, follower.pieces, sightings, times_s, frames, view.area_px2);
   }
   return model;
 }

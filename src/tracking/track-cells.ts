@@ -14,14 +14,7 @@ import { joinPieces } from "./join.ts";
 import { firstGuess, learnMotion } from "./learn-motion.ts";
 import type { MotionModel } from "./motion-model.ts";
 import type { TrackingSettings } from "./settings.ts";
-
-/** Where cells can be seen, scene pixels. */
-export interface TrackingView {
-  readonly width: number;
-  readonly height: number;
-  readonly circle: { readonly x: number; readonly y: number; readonly radius: number } | null;
-  readonly area_px2: number;
-}
+import { type TrackingView, toEdge } from "./view.ts";
 
 /** Paths, and what was learnt about how sightings follow one another. */
 export interface Tracked {
@@ -49,8 +42,8 @@ export function trackCells(
   const interval_s = medianInterval_s(times_s);
   const variances = positionVariances(sightings);
   const guess = firstGuess(index, sightings.count / Math.max(1, frames), view.area_px2, interval_s);
-  const motion = learnMotion(sightings, variances, index, times_s, guess, settings, interval_s, view.area_px2);
-  const follower = new Follower(sightings, variances, index, motion, settings, interval_s);
+  const motion = learnMotion(sightings, variances, index, times_s, guess, settings, interval_s, view);
+  const follower = new Follower(sightings, variances, index, motion, settings, interval_s, view);
   for (let f = 0; f < frames; f++) {
     if (f % 100 === 0) {
       throwIfStopped(context.signal);
@@ -58,7 +51,7 @@ export function trackCells(
     }
     follower.frame(f, times_s[f] as number);
   }
-  const pieces = follower.pieces.map((p) => p.rows);
+  const pieces = follower.pieces.map((p) => p.rows).filter((rows) => isSteady(rows, sightings));
   const joined = joinPieces(pieces, sightings, variances, times_s, motion, settings);
   const long = joined.filter((rows) => rows.length >= settings.fewestSightings);
   const paths = tableOf(long, sightings, times_s, view, motion);
@@ -77,6 +70,14 @@ export function trackCells(
     motion,
     neighbourDistance_px: index.medianNeighbourDistance(),
   };
+}
+
+/** A piece of path sighted in a smaller part of its frames than this is a chain of false alarms. */
+const leastSighted = 0.3;
+
+function isSteady(rows: readonly number[], s: Sightings): boolean {
+  const frames = (s.frame[rows.at(-1) as number] as number) - (s.frame[rows[0] as number] as number) + 1;
+  return rows.length >= leastSighted * frames;
 }
 
 /** A path fainter than this part of the usual sighting, and shorter than this, that came from nowhere is a trace. */
@@ -149,14 +150,6 @@ function tableOf(
     began,
     ended,
   };
-}
-
-/** Distance from a place in view to where the view ends, pixels. */
-function toEdge(view: TrackingView, x: number, y: number): number {
-  const frame = Math.min(x, y, view.width - 1 - x, view.height - 1 - y);
-  if (!view.circle) return frame;
-  const { circle } = view;
-  return Math.min(frame, circle.radius - Math.sqrt((x - circle.x) ** 2 + (y - circle.y) ** 2));
 }
 
 /** Median time between frames; 1 for a single frame. */
