@@ -1,0 +1,116 @@
+import { describe, expect, it } from "vitest";
+import { type Import, ownImports, shippedSources } from "./source-files.ts";
+
+/** The table of DEVELOPERS.md: what each part may import besides itself. */
+const mayImport: Readonly<Record<string, readonly string[]>> = {
+  quantities: [],
+  statistics: ["quantities"],
+  assay: ["quantities", "statistics"],
+  footage: ["quantities"],
+  vision: ["quantities"],
+  tracking: ["quantities", "statistics"],
+  "analysis/motion": ["quantities", "statistics"],
+  "analysis/quality": ["quantities", "statistics"],
+  trial: ["quantities"],
+  report: ["quantities", "statistics"],
+  pipeline: [
+    "quantities",
+    "statistics",
+    "footage",
+    "vision",
+    "tracking",
+    "analysis/motion",
+    "analysis/quality",
+    "trial",
+  ],
+  workers: ["quantities", "footage", "vision", "tracking", "pipeline", "trial", "report"],
+  app: ["quantities", "workers", "trial", "report", "pipeline"],
+  cli: ["quantities", "statistics", "assay", "footage", "vision", "tracking", "pipeline", "trial", "report"],
+};
+
+/** Folders that have a door of their own beside their parent's. */
+const doors = [
+  /^src\/footage\/(node|browser)\/index\.ts$/,
+  /^src\/analysis\/\w+\/index\.ts$/,
+  /^src\/cli\/encode\/index\.ts$/,
+];
+
+function partOf(path: string): string {
+  if (path.startsWith("workers/")) return "workers";
+  const [, first, second] = path.split("/") as [string, string, string];
+  return first === "analysis" ? `analysis/${second}` : first;
+}
+
+const sources = shippedSources();
+const imports = ownImports(sources);
+const code = imports.filter(({ to }) => /\.tsx?$/.test(to));
+
+describe("the one direction", () => {
+  it("looks at what there is", () => {
+    expect(sources.length).toBeGreaterThan(150);
+    expect(code.length).toBeGreaterThan(400);
+    expect([...new Set(sources.map(partOf))].filter((part) => !(part in mayImport))).toEqual([]);
+  });
+
+  it("no part imports what it may not", () => {
+    const wrong = code.filter(
+      ({ from, to }) => partOf(from) !== partOf(to) && !mayImport[partOf(from)]?.includes(partOf(to)),
+    );
+    expect(wrong.map(shown)).toEqual([]);
+  });
+
+  it("other parts are entered by their door", () => {
+    const wrong = code.filter(({ from, to }) => {
+      if (partOf(from) === partOf(to)) return false;
+      return !/^(src\/[\w-]+|workers)\/index\.ts$/.test(to) && !doors.some((door) => door.test(to));
+    });
+    expect(wrong.map(shown)).toEqual([]);
+  });
+
+  it("what measures can't reach what knows the truth", () => {
+    const reached = reachable(
+      code,
+      sources.filter((path) => ["pipeline", "app", "workers", "report"].includes(partOf(path))),
+    );
+    expect([...reached].filter((path) => partOf(path) === "assay")).toEqual([]);
+  });
+
+  it("nothing imports itself in a circle", () => {
+    expect(circleIn(code)).toBeNull();
+  });
+});
+
+const shown = ({ from, to }: Import) => `${from} imports ${to}`;
+
+function reachable(edges: readonly Import[], from: readonly string[]): Set<string> {
+  const seen = new Set(from);
+  for (const path of seen) for (const edge of edges) if (edge.from === path) seen.add(edge.to);
+  return seen;
+}
+
+/** One circle of imports, or null. */
+function circleIn(edges: readonly Import[]): string[] | null {
+  const next = groupByFrom(edges);
+  const done = new Set<string>();
+  const walk = (path: string, above: string[]): string[] | null => {
+    if (above.includes(path)) return [...above.slice(above.indexOf(path)), path];
+    if (done.has(path)) return null;
+    for (const { to } of next.get(path) ?? []) {
+      const found = walk(to, [...above, path]);
+      if (found) return found;
+    }
+    done.add(path);
+    return null;
+  };
+  for (const path of next.keys()) {
+    const found = walk(path, []);
+    if (found) return found;
+  }
+  return null;
+}
+
+function groupByFrom(edges: readonly Import[]): Map<string, Import[]> {
+  const groups = new Map<string, Import[]>();
+  for (const edge of edges) groups.set(edge.from, [...(groups.get(edge.from) ?? []), edge]);
+  return groups;
+}
