@@ -2,7 +2,7 @@ import { describe, expect, it } from "vitest";
 import { normalFrom } from "../../tests/helpers/normal.ts";
 import { openView, sightingAt, tableOf } from "../../tests/helpers/simulated-field.ts";
 import { evenTimes } from "../../tests/helpers/simulated-tracks.ts";
-import { type Paths, rowsOf, type Sighting, Stopped, seededRandom } from "../quantities/index.ts";
+import { duration_s, type Paths, rowsOf, type Sighting, Stopped, seededRandom } from "../quantities/index.ts";
 import { defaultTrackingSettings, trackCells } from "./index.ts";
 
 const view = openView(400, 300);
@@ -134,16 +134,27 @@ describe("following cells", () => {
     for (const { n } of outline(paths)) expect(n).toBe(80);
   });
 
-  it("makes no path of false alarms", () => {
-    // Three times what is allowed by default, over twenty seconds; alone and among cells.
+  it.each([21, 22, 23, 24, 25])("makes no path that counts of false alarms (%d)", (seed) => {
     const long = evenTimes(20, 30);
-    const random = seededRandom(8);
-    const alarms = Array.from(long).flatMap((_, frame) =>
-      random() < 0.3 ? [sightingAt(frame, 400 * random(), 300 * random(), { snr: 6 })] : [],
-    );
-    expect(alarms.length).toBeGreaterThan(150);
-    expect(follow(alarms, long).count).toBe(0);
-    expect(follow([...watch(company, long, 9), ...alarms], long).count).toBe(company.length);
+    const alarmsAt = (perFrame: number) => {
+      const random = seededRandom(seed);
+      return Array.from(long).flatMap((_, frame) =>
+        random() < perFrame ? [sightingAt(frame, 400 * random(), 300 * random(), { snr: 6 })] : [],
+      );
+    };
+    // As many as are allowed by default: none, alone or among cells.
+    expect(follow(alarmsAt(0.1), long).count).toBe(0);
+    expect(follow([...watch(company, long, 9), ...alarmsAt(0.1)], long).count).toBe(company.length);
+    // Three times as many: none that lasts the half second from which cells count.
+    const paths = follow(alarmsAt(0.3), long);
+    for (let p = 0; p < paths.count; p++) expect(duration_s(paths, p)).toBeLessThan(0.5);
+  });
+
+  it("keeps cells whole where every other frame only repeats the one before", () => {
+    const seen = (_: number, frame: number) => frame % 2 === 0;
+    const paths = follow(watch([straight(60, 60, 40, 10), ...company], times, 15, seen), times);
+    expect(paths.count).toBe(9);
+    for (const { n } of outline(paths)) expect(n).toBe(46);
   });
 
   it("says how paths began and ended", () => {

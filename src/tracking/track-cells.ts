@@ -72,8 +72,11 @@ export function trackCells(
   };
 }
 
-/** A piece of path sighted in a smaller part of its frames than this is a chain of false alarms. */
-const leastSighted = 0.3;
+/**
+ * A piece of path sighted in a smaller part of its frames than this is a chain of false alarms. Where every other frame
+ * only repeats the one before, cells are sighted in half.
+ */
+const leastSighted = 0.4;
 
 function isSteady(rows: readonly number[], s: Sightings): boolean {
   const frames = (s.frame[rows.at(-1) as number] as number) - (s.frame[rows[0] as number] as number) + 1;
