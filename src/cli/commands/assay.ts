@@ -18,8 +18,8 @@ settings). The same request makes the same bytes.
   --seed N            another sample of the same kind: 0 to 4294967295
   --set S.N=VALUE     any one setting over the preset's, as often as wanted; truth.json shows them all:
                       --set swimmers.speed_um_s=60 --set time.seconds=5 --set "sample.flow_um_s=[4,0]"
-  --codec NAME        h264 (when left out), hevc, vp9 or mjpeg
-  --container NAME    mp4 or mov for h264 and hevc, webm or mp4 for vp9, avi for mjpeg
+  --codec NAME        h264 (when left out), mjpeg, or with the optional codec library hevc, vp9 or av1
+  --container NAME    mp4 or mov for h264 and hevc, webm or mp4 for vp9 and av1, avi for mjpeg
   --quality N         constant rate factor, Motion JPEG: quantiser; smaller is better
   --rotate DEGREES    0, 90, 180 or 270: code the picture lying, with a tag that says how to turn it upright
                       (clockwise), as phones do
