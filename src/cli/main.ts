@@ -1,30 +1,37 @@
 #!/usr/bin/env node
 import { InputError } from "../quantities/index.ts";
 import { usageError } from "./arguments.ts";
-import { assay, help as assayHelp } from "./commands/assay.ts";
-import { measure, help as measureHelp } from "./commands/measure.ts";
-import { workbench, help as workbenchHelp } from "./commands/workbench.ts";
 import type { Io } from "./io.ts";
 import { errorJson, errorText, machineIo, personIo } from "./terminal.ts";
 import { tool } from "./tool.ts";
 
 interface Command {
-  readonly about: string;
   readonly help: string;
   run(args: readonly string[], json: boolean, io: Io): Promise<void>;
 }
 
-const commands: Readonly<Record<string, Command>> = {
-  measure: { about: "measure one trial", help: measureHelp, run: measure },
+/** Commands by name. Each is loaded when it is asked for: measuring needs much that help and errors don't. */
+const commands: Readonly<Record<string, { readonly about: string; load(): Promise<Command> }>> = {
+  measure: {
+    about: "measure one trial",
+    load: async () => {
+      const { help, measure } = await import("./commands/measure.ts");
+      return { help, run: measure };
+    },
+  },
   workbench: {
     about: "serve the workbench to this computer's browser",
-    help: workbenchHelp,
-    run: (args, _, io) => workbench(args, io),
+    load: async () => {
+      const { help, workbench } = await import("./commands/workbench.ts");
+      return { help, run: (args, _, io) => workbench(args, io) };
+    },
   },
   assay: {
     about: "make a synthetic trial whose truth is known",
-    help: assayHelp,
-    run: (args, _, io) => assay(args, io),
+    load: async () => {
+      const { help, assay } = await import("./commands/assay.ts");
+      return { help, run: (args, _, io) => assay(args, io) };
+    },
   },
 };
 
@@ -44,8 +51,9 @@ async function run(args: readonly string[], json: boolean, io: Io): Promise<void
   if (name === "--version") return io.out(tool.version);
   if (name === undefined) throw usageError("", "No command was given.");
   if (name === "--help" || name === "-h" || name === "help") return io.out(help);
-  const command = commands[name];
-  if (!command) throw usageError("", `There is no command "${name}".`);
+  const listed = Object.hasOwn(commands, name) ? commands[name] : undefined;
+  if (!listed) throw usageError("", `There is no command "${name}".`);
+  const command = await listed.load();
   if (rest.includes("--help") || rest.includes("-h")) return io.out(command.help);
   await command.run(rest, json, io);
 }

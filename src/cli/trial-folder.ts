@@ -66,5 +66,7 @@ async function readDescription(path: string) {
       "Check who may read it.",
     );
   });
-  return readTrial(text, path);
+  const { trial, warnings } = readTrial(text, path);
+  // Warnings go into the result, which must not depend on where the folder lies.
+  return { trial, warnings: warnings.map((w) => ({ ...w, message: w.message.replaceAll(path, "trial.json") })) };
 }

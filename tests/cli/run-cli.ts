@@ -1,0 +1,45 @@
+import { spawn, spawnSync } from "node:child_process";
+import { existsSync, mkdirSync, readdirSync, writeFileSync } from "node:fs";
+import { join } from "node:path";
+import { fileURLToPath } from "node:url";
+import { build } from "vite";
+
+const path = (relative: string) => fileURLToPath(new URL(relative, import.meta.url));
+const main = path("../../dist/cli/main.js");
+
+/** Builds the command line as it is shipped. */
+export const buildCli = () => build({ configFile: path("../../src/cli/vite.config.ts"), logLevel: "error" });
+
+/** What a run of the command line said and how it ended. */
+export interface Ended {
+  readonly code: number | null;
+  readonly out: string;
+  readonly err: string;
+}
+
+/** Runs the command line to its end. */
+export function lodewake(...args: string[]): Ended {
+  const { status, stdout, stderr } = spawnSync(process.execPath, [main, ...args], { encoding: "utf8" });
+  return { code: status, out: stdout, err: stderr };
+}
+
+/** Starts the command line and stops it with Ctrl-C once `when` is true of its standard error. */
+export function interrupted(args: string[], when: (err: string) => boolean): Promise<{ signal: string | null }> {
+  const child = spawn(process.execPath, [main, ...args], { stdio: ["ignore", "ignore", "pipe"] });
+  let err = "";
+  child.stderr.setEncoding("utf8").on("data", (text: string) => {
+    err += text;
+    if (when(err)) child.kill("SIGINT");
+  });
+  return new Promise((resolve) => child.once("close", (_, signal) => resolve({ signal })));
+}
+
+/** A trial folder with the given files: text, bytes, or nothing for an empty file. */
+export function makeTrial(folder: string, files: Readonly<Record<string, string | Uint8Array>>): string {
+  mkdirSync(folder, { recursive: true });
+  for (const [name, content] of Object.entries(files)) writeFileSync(join(folder, name), content);
+  return folder;
+}
+
+/** Names in a folder, hidden ones too; none when it isn't there. */
+export const namesIn = (folder: string): string[] => (existsSync(folder) ? readdirSync(folder) : []);
