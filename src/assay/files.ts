@@ -12,10 +12,12 @@ const scaleUncertainty = 0.002;
  */
 export function trialJson(settings: AssaySettings, recording: string, labels: TrialLabels): Record<string, unknown> {
   const { picture, time, field, sample } = settings;
+  const { trial, strain, culture, condition } = labels;
   const slow = time.container_fps !== null && time.container_fps !== time.fps;
   return {
     schema: "lodewake/trial@1",
-    ...labels,
+    // In the contract's order; those not given drop out when it is written.
+    ...{ trial, strain, culture, condition },
     recording,
     subject: "cells",
     scale: {
