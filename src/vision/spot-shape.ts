@@ -173,7 +173,7 @@ function blend(a: number, b: number, share: number): number {
 }
 
 function clamp(v: number, most: number): number {
-  return v > most ? most : v < -most ? -most : v;
+  return Math.min(most, Math.max(-most, v));
 }
 
 /** Keeps both eigenvalues of a symmetric 2 x 2 matrix within bounds. */
