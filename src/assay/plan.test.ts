@@ -123,6 +123,38 @@ describe("truth", () => {
     expect(planAssay({ ...bare, time: brief, swimmers: { cells: 0 } }).truth().trial.mean_speed_um_s).toBeNull();
   });
 
+  it("takes a cell that comes back into view after half a second or more for another", () => {
+    // A small eyepiece and a reversal: cells swim out and, turned round, in again.
+    const assay = planAssay({
+      ...bare,
+      time: { seconds: 6, fps: 30 },
+      swimmers: { cells: 15, speed_um_s: 40 },
+      light: { eyepiece: 0.6 },
+      field: {
+        steps: [
+          { t_s: 0, magnitude_mT: 0.4, angle_deg: 0 },
+          { t_s: 2, magnitude_mT: 0.4, angle_deg: 180 },
+        ],
+      },
+    });
+    const { rows, cells } = assay.truth();
+    let out = 0;
+    for (const { cell, first_frame, last_frame } of cells) {
+      const times = rows.filter((r) => r.cell === cell).map((r) => r.t_s);
+      expect(times.length).toBeGreaterThan(0);
+      expect(times[0]).toBe(assay.times_s[first_frame]);
+      expect(times.at(-1)).toBe(assay.times_s[last_frame]);
+      times.slice(1).forEach((t, i) => {
+        expect(t - (times[i] as number)).toBeLessThanOrEqual(0.5 + 1e-9);
+        if (t - (times[i] as number) > 1.5 / 30) out++;
+      });
+    }
+    expect(new Set(cells.map((c) => c.cell)).size).toBe(cells.length);
+    // Some blink at the rim and stay the same; the box alone would hold fewer cells than came and went.
+    expect(out).toBeGreaterThan(0);
+    expect(cells.length).toBeGreaterThan(40);
+  });
+
   it("leaves out what lies outside the eyepiece", () => {
     const assay = planAssay({ ...bare, time: brief, swimmers: { cells: 40 }, light: { eyepiece: 0.7 } });
     const reach = assay.truth().rows.map((r) => Math.hypot(r.x_px - 79.5, r.y_px - 59.5));

@@ -26,6 +26,9 @@ export interface TruthRow {
   readonly visible: boolean;
 }
 
+/** A row before its cell has a number. */
+type UnnamedRow = Omit<TruthRow, "cell">;
+
 /** One cell over the time it was visible. */
 export interface TruthCell {
   readonly cell: number;
@@ -72,6 +75,9 @@ export interface AssayTruth {
 /** Shortest visible time for a cell's speed to count, as in the results. */
 const countsFrom_s = 0.5;
 
+/** Who comes back into view after longer than this is another cell to whoever watches. */
+const sameCellFor_s = 0.5;
+
 export function gatherTruth(
   settings: AssaySettings,
   capture: Capture,
@@ -86,11 +92,11 @@ export function gatherTruth(
   for (const motion of motions) {
     const visits = (motion.visit[capture.frames - 1] ?? 0) + 1;
     for (let visit = 0; visit < visits; visit++) {
-      const own = rowsOfVisit(cell + 1, visit, settings, capture, motion, camera);
-      if (own.length === 0) continue;
-      cell++;
-      for (const row of own) rows.push(row);
-      cells.push(cellTruth(own, motion, netField_mT, capture));
+      for (const own of appearances(rowsOfVisit(visit, settings, capture, motion, camera))) {
+        cell++;
+        for (const row of own) rows.push({ ...row, cell });
+        cells.push({ cell, ...cellTruth(own, motion, netField_mT, capture) });
+      }
     }
   }
   for (const piece of camera.pieces) {
@@ -105,23 +111,33 @@ export function gatherTruth(
   };
 }
 
+/** Parts a visit's rows where the cell was out of view for long. */
+function appearances(rows: readonly UnnamedRow[]): UnnamedRow[][] {
+  const parts: UnnamedRow[][] = [];
+  let last_s = Number.NEGATIVE_INFINITY;
+  for (const row of rows) {
+    if (row.t_s - last_s > sameCellFor_s) parts.push([]);
+    parts.at(-1)?.push(row);
+    last_s = row.t_s;
+  }
+  return parts;
+}
+
 function rowsOfVisit(
-  cell: number,
   visit: number,
   settings: AssaySettings,
   capture: Capture,
   motion: Motion,
   camera: Camera,
-): TruthRow[] {
+): UnnamedRow[] {
   const speed = motion.body.speed_um_s;
-  const rows: TruthRow[] = [];
+  const rows: UnnamedRow[] = [];
   for (let frame = 0; frame < capture.frames; frame++) {
     const shown = capture.shows[frame] as number;
     if (motion.visit[shown] !== visit) continue;
     const { x_px, y_px, signalToNoise, inView } = camera.look(motion, frame);
     if (!inView) continue;
     rows.push({
-      cell,
       kind: motion.body.kind,
       frame,
       t_s: capture.times_s[frame] as number,
@@ -170,7 +186,12 @@ function rowsOfPiece(
   return rows;
 }
 
-function cellTruth(rows: readonly TruthRow[], motion: Motion, netField_mT: number, capture: Capture): TruthCell {
+function cellTruth(
+  rows: readonly UnnamedRow[],
+  motion: Motion,
+  netField_mT: number,
+  capture: Capture,
+): Omit<TruthCell, "cell"> {
   const { body } = motion;
   const seen = rows.filter((r) => r.visible);
   const first = seen[0];
@@ -178,7 +199,6 @@ function cellTruth(rows: readonly TruthRow[], motion: Motion, netField_mT: numbe
   const swims = body.kind === "swimmer";
   const sum = seen.reduce((total, r) => total + Math.hypot(r.vx_um_s, r.vy_um_s), 0);
   return {
-    cell: rows[0]?.cell as number,
     kind: body.kind,
     first_frame: rows[0]?.frame as number,
     last_frame: rows.at(-1)?.frame as number,
