@@ -28,6 +28,18 @@ const usual = {
 };
 
 describe("paths against the truth", () => {
+  it("finds the few swimmers among many dead cells", () => {
+    const times = evenTimes(4, 30);
+    const dead = simulateField({ ...usual, cells: 100, speed: 0 }, times, seededRandom(91));
+    const swimmers = simulateField({ ...usual, cells: 3, speed: 120, falsePerFrame: 0 }, times, seededRandom(92));
+    const view = openView(usual.width, usual.height);
+    const sightings = tableOf([...dead.sightings, ...swimmers.sightings]);
+    const { paths } = trackCells(sightings, times, view, defaultTrackingSettings, {});
+    const { missed, truePositives } = pathAgreement(swimmers.truth, placesOf(paths));
+    // 2 % are missed, and the crossing of a dead cell may cost some more.
+    expect(truePositives / (truePositives + missed)).toBeGreaterThan(0.93);
+  });
+
   // The bounds are what is asked of the program. Positions missed (2 %) and paths of fewer than four sightings cost 2 to 3 %.
   it.each([
     ["forty swimmers", usual, 30, 0.95],

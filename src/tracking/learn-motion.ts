@@ -76,7 +76,8 @@ function improve(
   const speeds = long.map((p) => firstSpeed_px_s(p, sightings, times_s)).sort((a, b) => a - b);
   // The fastest cells must lie within the first gate; the slow ones do anyway.
   const fast = speeds[Math.floor(0.95 * (speeds.length - 1))] as number;
-  const speedSd_px_s = Math.max(fast / 2, 4 * Math.sqrt(model.diffusion_px2_s));
+  // A few swimmers among many dead cells are in no percentile, so the very fastest counts too.
+  const speedSd_px_s = Math.max(fast / 2, (speeds.at(-1) as number) / 3, 4 * Math.sqrt(model.diffusion_px2_s));
   const swims = (p: Piece) => firstSpeed_px_s(p, sightings, times_s) > 0.4 * fast;
   const turning = ratio(long.filter(swims));
   const wandering = ratio(long.filter((p) => !swims(p)));

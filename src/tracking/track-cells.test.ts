@@ -120,6 +120,14 @@ describe("following cells", () => {
     for (const { n } of outline(paths)) expect(n).toBe(91);
   });
 
+  it("keeps the one cell among calm ones that turns back at once, missed as it does", () => {
+    const back: Way = (t) => [t < 1.5 ? 60 + 150 * t : 285 - 150 * (t - 1.5), 80];
+    const missed = (cell: number, frame: number) => cell > 0 || frame < 45 || frame > 47;
+    const paths = follow(watch([back, ...company], times, 16, missed), times);
+    expect(paths.count).toBe(9);
+    expect(outline(paths).some((o) => o.n === 88)).toBe(true);
+  });
+
   it("uses each frame's own time", () => {
     const random = seededRandom(6);
     let now = 0;
