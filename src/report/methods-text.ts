@@ -29,9 +29,13 @@ const kalman: Reference = {
   short: "Kalman 1960",
   full: "Kalman RE. A new approach to linear filtering and prediction problems. J. Basic Eng. 82, 35–45 (1960).",
 };
-const rousseeuw: Reference = {
-  short: "Rousseeuw and Croux 1993",
-  full: "Rousseeuw PJ, Croux C. Alternatives to the median absolute deviation. J. Am. Stat. Assoc. 88, 1273–1283 (1993).",
+const marquardt: Reference = {
+  short: "Marquardt 1963",
+  full: "Marquardt DW. An algorithm for least-squares estimation of nonlinear parameters. J. Soc. Ind. Appl. Math. 11, 431–441 (1963).",
+};
+const rice: Reference = {
+  short: "Rice 1945",
+  full: "Rice SO. Mathematical analysis of random noise. Bell Syst. Tech. J. 24, 46–156 (1945).",
 };
 const student: Reference = {
   short: "Student 1908",
@@ -49,28 +53,36 @@ const wilson: Reference = {
 /** A methods section ready to paste, for what was done to this trial. */
 export function methodsText(measured: MeasuredTrial): MethodsText {
   const finding =
-    "In every frame the still background (temporal median) was subtracted and the residual divided by the local noise " +
-    `(scaled median absolute deviation over time; ${rousseeuw.short}). The result was smoothed with a Gaussian matched ` +
-    "to the size of the cells. Its threshold was set so that noise alone would rarely pass anywhere in a frame, from " +
-    `the expected Euler characteristic of a Gaussian random field (${adler.short}). Cells were located with sub-pixel ` +
-    `accuracy by an adaptive-moment weighted centroid (${bernstein.short}).`;
+    "A still background (mean of the middle quarter of 32 frames of the first seconds, pixel by pixel) was subtracted from " +
+    "every frame and the residual divided by the noise, read from the spread over the same frames. The result was " +
+    "smoothed with a Gaussian matched to the size of the cells. The threshold was set so that noise alone would rarely " +
+    `pass anywhere in a frame, from the expected Euler characteristic of a Gaussian random field (${adler.short}), and ` +
+    "raised where the polarity that cells don't have showed more. Cells were located with sub-pixel accuracy by " +
+    `adaptive Gaussian-weighted moments (${bernstein.short}), touching ones by a joint least-squares fit ` +
+    `(${marquardt.short}).`;
   const following =
     `Sightings were joined into paths with a Kalman filter (${kalman.short}) that predicts each position over the ` +
-    "measured time between frames, and a globally optimal assignment of sightings to predictions " +
+    "measured time between frames, and an optimal assignment of sightings to predictions by likelihood " +
     `(${jonker.short}).`;
   const judging =
-    "A cell was called motile when its displacement was larger than diffusion and flow explain (displacement test at " +
-    "a fixed false-positive rate). Localisation noise was estimated from the covariance of successive displacements " +
-    `(${vestergaard.short}) and its contribution to the speed removed. Speeds are in the image plane.` +
-    (measured.drift ? " The common flow of the fluid was measured and subtracted." : "");
+    "A cell was called motile when it moved farther than diffusion, localisation and flow explain, at a chance of 1 % that " +
+    "any diffusing cell of the clip is called so. Diffusion and localisation noise were estimated from the covariance of " +
+    `successive displacements (${vestergaard.short}). Speeds are slopes of straight lines fitted to short stretches of ` +
+    `the path, corrected for what noise adds to their length (${rice.short}), in the image plane.${flowText(measured)}`;
   const counting =
     "The mean speed is over motile cells followed for at least 0.5 s, each cell once, with a 95 % interval from " +
     `Student's t distribution over cells (${student.short}). The motile share has a Wilson 95 % interval ` +
     `(${wilson.short}).`;
   return {
     paragraphs: [`${recordingText(measured)} ${finding}`, `${following} ${judging}`, counting],
-    references: [adler, bernstein, jonker, kalman, rousseeuw, student, vestergaard, wilson],
+    references: [adler, bernstein, jonker, kalman, marquardt, rice, student, vestergaard, wilson],
   };
+}
+
+function flowText({ drift }: MeasuredTrial): string {
+  if (!drift) return "";
+  const from = drift.from === "diffusing cells" ? "cells that only diffused" : "swimmers that turned, by regression";
+  return ` The common flow of the fluid was measured from ${from}, and subtracted.`;
 }
 
 function recordingText({ source, scale, tool }: MeasuredTrial): string {
@@ -81,6 +93,6 @@ function recordingText({ source, scale, tool }: MeasuredTrial): string {
     : "No scale was given; lengths are in pixels.";
   return (
     `The recording (${source.width_px} × ${source.height_px} pixels, ${source.frames} frames${rate}${clock}) was ` +
-    `measured with ${tool.name} ${tool.version}. ${sized} Times are capture times from the recording's own time stamps.`
+    `measured with Lodewake ${tool.version}. ${sized} Times are capture times from the recording's own time stamps.`
   );
 }
