@@ -58,6 +58,13 @@ async function run(args: readonly string[], json: boolean, io: Io): Promise<void
   await command.run(rest, json, io);
 }
 
+// Whoever reads may stop reading (a pipe into head): no reason to stop, or to fail.
+for (const stream of [process.stdout, process.stderr]) {
+  stream.on("error", (error: NodeJS.ErrnoException) => {
+    if (error.code !== "EPIPE") throw error;
+  });
+}
+
 const args = process.argv.slice(2);
 const json = args.includes("--json");
 const now_s = () => performance.now() / 1000;

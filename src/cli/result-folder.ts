@@ -1,6 +1,6 @@
 import { writeFile } from "node:fs/promises";
 import { join } from "node:path";
-import { cantWrite, checkFolder, type FolderKind, writeFolder } from "./whole-folder.ts";
+import { cantWrite, checkFolder, type FolderKind, removedWhenStopped, writeFolder } from "./whole-folder.ts";
 
 /** A file to be written into a result folder. */
 interface NamedBytes {
@@ -8,7 +8,7 @@ interface NamedBytes {
   readonly bytes: Uint8Array;
 }
 
-const kind: FolderKind = { name: "result", mark: "summary.json" };
+const kind: FolderKind = { name: "result", mark: "summary.json", schema: "lodewake/summary@" };
 
 /**
  * Refuses a folder that results can't be written to, before any work is done. Leaves nothing behind.
@@ -25,11 +25,11 @@ export function checkResultFolder(path: string, replace: boolean): Promise<void>
  * @throws InputError as {@link checkResultFolder}
  */
 export function writeResultFolder(path: string, files: readonly NamedBytes[], replace: boolean): Promise<void> {
-  return writeFolder(path, kind, replace, async (folder) => {
-    try {
+  return writeFolder(path, kind, replace, (folder) =>
+    removedWhenStopped(folder, async () => {
       for (const { name, bytes } of files) await writeFile(join(folder, name), bytes);
-    } catch (error) {
+    }).catch((error) => {
       throw cantWrite(path, kind, error);
-    }
-  });
+    }),
+  );
 }

@@ -16,8 +16,10 @@ export interface TrialFolder {
  * @throws InputError when the folder isn't there, its description is wrong, or it has no recording or more than one
  */
 export async function readTrialFolder(folder: string): Promise<TrialFolder> {
-  const names = await namesIn(folder);
-  const description = names.includes("trial.json") ? await readDescription(join(folder, "trial.json")) : null;
+  const top = await namesIn(folder, false);
+  const description = top.includes("trial.json") ? await readDescription(join(folder, "trial.json")) : null;
+  // Only a description can name a file farther down; without one a whole disk given by mistake isn't walked through.
+  const names = description ? await namesIn(folder, true) : top;
   const recording = chooseRecording(names, description?.trial.recording ?? null, folder);
   return {
     trial: description?.trial ?? bareTrial(recording),
@@ -26,7 +28,7 @@ export async function readTrialFolder(folder: string): Promise<TrialFolder> {
   };
 }
 
-async function namesIn(folder: string): Promise<string[]> {
+async function namesIn(folder: string, recursive: boolean): Promise<string[]> {
   const there = await stat(folder).catch(() => null);
   if (!there) {
     throw new InputError("trial-missing", "There is no such folder.", folder, "Give the folder of the trial.");
@@ -39,7 +41,7 @@ async function namesIn(folder: string): Promise<string[]> {
       "Put the recording into a folder of its own and give the folder.",
     );
   }
-  const found = await readdir(folder, { recursive: true, withFileTypes: true }).catch((error: Error) => {
+  const found = await readdir(folder, { recursive, withFileTypes: true }).catch((error: Error) => {
     throw new InputError(
       "trial-unreadable",
       `The folder can't be read (${error.message}).`,

@@ -1,4 +1,5 @@
-import { mkdir, readdir, rename, rm, rmdir, stat } from "node:fs/promises";
+import { rmSync } from "node:fs";
+import { mkdir, readdir, readFile, rename, rm, rmdir, stat } from "node:fs/promises";
 import { basename, dirname, join, resolve } from "node:path";
 import { InputError } from "../quantities/index.ts";
 
@@ -8,6 +9,8 @@ export interface FolderKind {
   readonly name: string;
   /** The file by which an older one is known. */
   readonly mark: string;
+  /** How the `schema` in that file begins. */
+  readonly schema: string;
 }
 
 /**
@@ -77,7 +80,7 @@ async function refuseWhatIsThere(target: string, shown: string, kind: FolderKind
     throw cantWrite(shown, kind, error);
   });
   if (content.length === 0) return true;
-  if (!content.includes(kind.mark)) {
+  if (!content.includes(kind.mark) || !(await isMarked(join(target, kind.mark), kind.schema))) {
     throw new InputError(
       `output-not-a-${kind.name.replaceAll(" ", "-")}`,
       `The folder holds something that is no ${kind.name} of Lodewake, and will not be touched.`,
@@ -94,6 +97,16 @@ async function refuseWhatIsThere(target: string, shown: string, kind: FolderKind
     );
   }
   return true;
+}
+
+/** Is this JSON file of ours? Other programs write files of the same name. */
+async function isMarked(file: string, schema: string): Promise<boolean> {
+  try {
+    const found = JSON.parse(await readFile(file, "utf8"))?.schema;
+    return typeof found === "string" && found.startsWith(schema);
+  } catch {
+    return false;
+  }
 }
 
 interface Made {
@@ -120,6 +133,29 @@ async function makeBeside(target: string, shown: string, kind: FolderKind): Prom
 async function unmake({ folder, parents }: Made): Promise<void> {
   await rm(folder, { recursive: true, force: true });
   for (const p of [...parents].reverse()) await rmdir(p).catch(() => {});
+}
+
+const stops = ["SIGINT", "SIGTERM", "SIGHUP"] as const;
+
+/**
+ * Works in an unfinished folder, which goes when the program is told to stop meanwhile. Only for work that lets the
+ * program breathe: a signal waits until it does.
+ */
+export async function removedWhenStopped(folder: string, work: () => Promise<void>): Promise<void> {
+  const stop = (signal: NodeJS.Signals) => {
+    rmSync(folder, { recursive: true, force: true });
+    unwatch();
+    process.kill(process.pid, signal);
+  };
+  const unwatch = () => {
+    for (const signal of stops) process.off(signal, stop);
+  };
+  for (const signal of stops) process.on(signal, stop);
+  try {
+    await work();
+  } finally {
+    unwatch();
+  }
 }
 
 /** What to say when the disk refuses a {@link FolderKind} at the path shown. */

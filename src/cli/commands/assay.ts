@@ -30,7 +30,7 @@ settings). The same request makes the same bytes.
 
 Exit codes: 0 made, 2 the request is wrong, 1 Lodewake failed.`;
 
-const kind: FolderKind = { name: "synthetic trial", mark: "truth.json" };
+const kind: FolderKind = { name: "synthetic trial", mark: "truth.json", schema: "lodewake/assay-truth@" };
 
 /** Runs `lodewake assay`. @throws InputError when the request is wrong */
 export async function assay(args: readonly string[], io: Pick<Io, "out" | "progress">): Promise<void> {

@@ -1,4 +1,4 @@
-import { basename } from "node:path";
+import { join } from "node:path";
 import type { FootageSettings } from "../../footage/index.ts";
 import { openInNode } from "../../footage/node/index.ts";
 import { defaultMeasureSettings, measureTrial } from "../../pipeline/index.ts";
@@ -65,7 +65,7 @@ export async function measure(args: readonly string[], json: boolean, io: Io): P
     return;
   }
   for (const line of findingLines(complete)) io.out(line);
-  io.out(`Result: ${values.out} (open ${basename(values.out)}/report.html)`);
+  io.out(`Result: ${values.out} (open ${join(values.out, "report.html")})`);
 }
 
 function isDecoder(name: string): name is NonNullable<FootageSettings["decoder"]> {
