@@ -29,7 +29,7 @@ describe("97.5 % point of Student's t", () => {
 });
 
 describe("Wilson's interval", () => {
-  // Newcombe 1998, Statistics in Medicine 17, 857, table I, method 3 (score without continuity correction): four decimals.
+  // Newcombe 1998, Statistics in Medicine 17, 857, table I, method 3 (score without continuity correction), from memory: four decimals.
   it.each([
     [81, 263, 0.2553, 0.3662],
     [15, 148, 0.0624, 0.1605],
