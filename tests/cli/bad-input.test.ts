@@ -2,7 +2,7 @@ import { existsSync, mkdirSync, readFileSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { ClipFolder, cutFile, evenTimes, layOut, makeClip, makeSoundOnly } from "../helpers/clips.ts";
-import { buildCli, type Ended, lodewake, makeTrial, namesIn } from "./run-cli.ts";
+import { buildCli, type Ended, lodewake, makeTrial, namesIn, removeCli } from "./run-cli.ts";
 
 const clips = new ClipFolder();
 const at = (name: string) => clips.at(name);
@@ -16,7 +16,10 @@ beforeAll(async () => {
   clip = readFileSync(await makeClip(at("whole.mp4"), scene));
   atFront = readFileSync(await layOut(at("whole.mp4"), at("front.mp4"), "in-memory"));
 }, 240_000);
-afterAll(() => clips.remove());
+afterAll(() => {
+  removeCli();
+  clips.remove();
+});
 
 /** Refused as wrong, with a message that says what, where and what to do; nothing was written. */
 function expectRefused({ code, out, err }: Ended, what: RegExp, result: string): void {
@@ -47,12 +50,20 @@ describe("a trial that can't be measured is refused", () => {
     ["a recording that isn't there", () => ({ "swim.mp4": clip, "trial.json": trial({}, "swum.mp4") }), /swum\.mp4/],
     ["a recording that is no video", () => ({ "swim.mp4": "I am a text.\n".repeat(50) }), /video/],
     ["an empty recording", () => ({ "swim.mp4": "" }), /empty/],
-    ["a recording cut off before its index", () => ({ "swim.mp4": clip.subarray(0, clip.length / 2) }), /./],
+    [
+      "a recording cut off before its index",
+      () => ({ "swim.mp4": clip.subarray(0, clip.length / 2) }),
+      /cut off before/,
+    ],
     ["a codec nobody can decode", () => ({ "swim.mp4": withCodec(clip, "zz99") }), /zz99|codec|decode/],
   ])("%s", (name, files, what) => {
     const folder = makeTrial(at(`trial ${name}`), files());
     const result = at("result");
-    expectRefused(lodewake("measure", folder, "--out", result), what, result);
+    const before = namesIn(folder);
+    const ended = lodewake("measure", folder, "--out", result);
+    expectRefused(ended, what, result);
+    expect(ended.err).toContain(folder);
+    expect(namesIn(folder)).toEqual(before);
   });
 
   it("a folder that isn't there, and a file in its place", () => {
@@ -88,6 +99,19 @@ describe("a place that can't be written to is refused before anything is measure
     expect(readFileSync(at("file"), "utf8")).toBe("mine");
   });
 
+  it("a folder whose summary is another program's stays as it is, even with --replace", () => {
+    const other = makeTrial(at("other"), { "summary.json": '{ "schema": "other@1" }', "chapter.txt": "one" });
+    const { code, err } = lodewake("measure", folder, "--out", other, "--replace");
+    expect([code, err]).toEqual([2, expect.stringContaining("will not be touched")]);
+    expect(namesIn(other).sort()).toEqual(["chapter.txt", "summary.json"]);
+  });
+
+  it("the trial's own folder stays as it is", () => {
+    const { code, err } = lodewake("measure", folder, "--out", folder, "--replace");
+    expect([code, err]).toEqual([2, expect.stringContaining("will not be touched")]);
+    expect(namesIn(folder)).toEqual(["swim.mp4"]);
+  });
+
   it("a folder that is no result stays as it is, even with --replace", () => {
     const other = makeTrial(at("thesis"), { "chapter.txt": "one" });
     const { code, err } = lodewake("measure", folder, "--out", other, "--replace");
@@ -107,6 +131,8 @@ describe("a request that can't be understood", () => {
     [["measure", "a", "--out", "b", "--fast"], /--fast/],
     [["measure", "a", "--out", "b", "--decoder", "best"], /auto, native or wasm/],
     [["workbench", "--port", "high"], /--port/],
+    [["assay"], /--out/],
+    [["assay", "--out", "b", "--fast"], /--fast/],
   ])("lodewake %j", (args, what) => {
     const { code, err, out } = lodewake(...args);
     expect([code, out]).toEqual([2, ""]);

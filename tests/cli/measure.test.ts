@@ -4,7 +4,7 @@ import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { planAssay } from "../../src/assay/index.ts";
 import { encodeRecording } from "../../src/cli/encode/index.ts";
 import { ClipFolder, evenTimes, makeClip } from "../helpers/clips.ts";
-import { buildCli, interrupted, lodewake, makeTrial, namesIn } from "./run-cli.ts";
+import { buildCli, interrupted, lodewake, makeTrial, namesIn, removeCli, unread } from "./run-cli.ts";
 
 const folder = new ClipFolder();
 const at = (name: string) => folder.at(name);
@@ -42,7 +42,10 @@ beforeAll(async () => {
   const scene = { width: 160, height: 120, times_s: evenTimes(45, 30), constantRate: true, shows: () => 0 };
   await makeClip(at("still/swim.mp4"), scene);
 }, 300_000);
-afterAll(() => folder.remove());
+afterAll(() => {
+  removeCli();
+  folder.remove();
+});
 
 describe("lodewake measure", () => {
   it("writes the whole result and says what it found", () => {
@@ -122,6 +125,24 @@ describe("lodewake measure", () => {
     );
     expect(signal).toBe("SIGINT");
     expect(namesIn(folder.path).filter((name) => name.includes("r7"))).toEqual([]);
+  });
+
+  it("leaves the older result as it was when it is stopped", async () => {
+    expect(lodewake("measure", still, "--out", at("r8")).code).toBe(0);
+    const before = names.map((name) => readFileSync(join(at("r8"), name)));
+    const args = ["measure", swimming, "--out", at("r8"), "--replace", "--json"];
+    const { signal } = await interrupted(args, (err) => /finding cells/.test(err));
+    expect(signal).toBe("SIGINT");
+    expect(names.map((name) => readFileSync(join(at("r8"), name)))).toEqual(before);
+    expect(namesIn(folder.path).filter((name) => name.includes("r8"))).toEqual(["r8"]);
+  });
+
+  it("writes the result though nobody reads what it says", async () => {
+    expect(await unread("measure", still, "--out", at("r9"))).toEqual({
+      code: 0,
+      err: expect.stringContaining("Note:"),
+    });
+    expect(namesIn(at("r9")).sort()).toEqual(names);
   });
 });
 

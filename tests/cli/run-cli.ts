@@ -1,14 +1,21 @@
 import { spawn, spawnSync } from "node:child_process";
-import { existsSync, mkdirSync, readdirSync, writeFileSync } from "node:fs";
+import { existsSync, mkdirSync, readdirSync, rmSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { build } from "vite";
 
 const path = (relative: string) => fileURLToPath(new URL(relative, import.meta.url));
-const main = path("../../dist/cli/main.js");
+/** A build of this process's own: tests that run at the same time must not empty each other's folder. */
+const folder = path(`../../dist/cli-of-test-${process.pid}`);
+const main = join(folder, "main.js");
 
 /** Builds the command line as it is shipped. */
-export const buildCli = () => build({ configFile: path("../../src/cli/vite.config.ts"), logLevel: "error" });
+export async function buildCli(): Promise<void> {
+  await build({ configFile: path("../../src/cli/vite.config.ts"), logLevel: "error", build: { outDir: folder } });
+}
+
+/** Removes what {@link buildCli} built. */
+export const removeCli = (): void => rmSync(folder, { recursive: true, force: true });
 
 /** What a run of the command line said and how it ended. */
 export interface Ended {
@@ -32,6 +39,17 @@ export function interrupted(args: string[], when: (err: string) => boolean): Pro
     if (when(err)) child.kill("SIGINT");
   });
   return new Promise((resolve) => child.once("close", (_, signal) => resolve({ signal })));
+}
+
+/** Runs the command line for a reader who goes away at once, as `head` does. */
+export function unread(...args: string[]): Promise<{ code: number | null; err: string }> {
+  const child = spawn(process.execPath, [main, ...args], { stdio: ["ignore", "pipe", "pipe"] });
+  child.stdout.destroy();
+  let err = "";
+  child.stderr.setEncoding("utf8").on("data", (text: string) => {
+    err += text;
+  });
+  return new Promise((resolve) => child.once("close", (code) => resolve({ code, err })));
 }
 
 /** A trial folder with the given files: text, bytes, or nothing for an empty file. */

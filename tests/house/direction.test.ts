@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { type Import, ownImports, shippedSources } from "./source-files.ts";
+import { besideTests, type Import, ownImports, shippedSources } from "./source-files.ts";
 
 /** The table of DEVELOPERS.md: what each part may import besides itself. */
 const mayImport: Readonly<Record<string, readonly string[]>> = {
@@ -37,13 +37,17 @@ const doors = [
 
 function partOf(path: string): string {
   if (path.startsWith("workers/")) return "workers";
+  if (path.startsWith("tests/helpers/")) return "tests/helpers";
   const [, first, second] = path.split("/") as [string, string, string];
   return first === "analysis" ? `analysis/${second}` : first;
 }
 
 const sources = shippedSources();
 const imports = ownImports(sources);
-const code = imports.filter(({ to }) => /\.tsx?$/.test(to));
+const isCode = ({ to }: Import) => /\.tsx?$/.test(to);
+const code = imports.filter(isCode);
+const measures = ["footage", "vision", "tracking", "analysis/motion", "analysis/quality", "pipeline", "report"];
+const neverTrue = [...measures, "workers", "app"];
 
 describe("the one direction", () => {
   it("looks at what there is", () => {
@@ -60,18 +64,24 @@ describe("the one direction", () => {
   });
 
   it("other parts are entered by their door", () => {
-    const wrong = code.filter(({ from, to }) => {
-      if (partOf(from) === partOf(to)) return false;
-      return !/^(src\/[\w-]+|workers)\/index\.ts$/.test(to) && !doors.some((door) => door.test(to));
-    });
-    expect(wrong.map(shown)).toEqual([]);
+    expect(code.filter(goesRoundTheDoor).map(shown)).toEqual([]);
+  });
+
+  it("tests beside the code keep to it too, but for the tests' helpers and the synthetic assays", () => {
+    const tests = ownImports(besideTests()).filter((one) => isCode(one) && partOf(one.to) !== "tests/helpers");
+    expect(tests.length).toBeGreaterThan(100);
+    const wrong = tests.filter(
+      ({ from, to }) => ![partOf(from), "assay", ...(mayImport[partOf(from)] ?? [])].includes(partOf(to)),
+    );
+    expect([...wrong, ...tests.filter(goesRoundTheDoor)].map(shown)).toEqual([]);
   });
 
   it("what measures can't reach what knows the truth", () => {
     const reached = reachable(
       code,
-      sources.filter((path) => ["pipeline", "app", "workers", "report"].includes(partOf(path))),
+      sources.filter((path) => neverTrue.includes(partOf(path))),
     );
+    expect([...new Set([...reached].map(partOf))]).toEqual(expect.arrayContaining(neverTrue));
     expect([...reached].filter((path) => partOf(path) === "assay")).toEqual([]);
   });
 
@@ -79,6 +89,11 @@ describe("the one direction", () => {
     expect(circleIn(code)).toBeNull();
   });
 });
+
+function goesRoundTheDoor({ from, to }: Import): boolean {
+  if (partOf(from) === partOf(to)) return false;
+  return !/^(src\/[\w-]+|workers)\/index\.ts$/.test(to) && !doors.some((door) => door.test(to));
+}
 
 const shown = ({ from, to }: Import) => `${from} imports ${to}`;
 

@@ -15,6 +15,9 @@ export function projectFiles(): string[] {
     .filter((path) => existsSync(join(root, path)));
 }
 
+/** The bytes of a project file as text, a character a byte. */
+export const bytesOfFile = (path: string): string => readFileSync(join(root, path), "latin1");
+
 /** The text of a project file. */
 export const textOfFile = (path: string): string => readFileSync(join(root, path), "utf8");
 
@@ -50,3 +53,7 @@ export function shippedSources(): string[] {
     (path) => /^(src|workers)\/.*\.tsx?$/.test(path) && !/\.test\.tsx?$|kernels\/assembly\/|vite\.config/.test(path),
   );
 }
+
+/** Unit tests that stand beside the code. */
+export const besideTests = (): string[] =>
+  projectFiles().filter((path) => /^(src|workers)\/.*\.test\.tsx?$/.test(path));
