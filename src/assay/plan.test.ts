@@ -3,6 +3,7 @@ import { InputError } from "../quantities/index.ts";
 import type { AssayOptions } from "./options.ts";
 import { type Assay, planAssay } from "./plan.ts";
 import { assayPresets } from "./presets.ts";
+import type { TruthRow } from "./truth.ts";
 
 const small = { width_px: 160, height_px: 120, um_per_px: 0.4 };
 const bare: AssayOptions = { picture: small, debris: { pieces: 0 }, stuck: { cells: 0 }, dead: { cells: 0 } };
@@ -12,6 +13,13 @@ function picture(assay: Assay, frame: number): Uint8Array {
   const out = new Uint8Array(assay.width * assay.height);
   assay.render(frame, out);
   return out;
+}
+
+/** What a frame holds, and how it looks with and without. */
+interface Look {
+  readonly rows: readonly TruthRow[];
+  readonly pixels: Uint8Array;
+  readonly without: Uint8Array;
 }
 
 /** FNV-1a of the bytes (Fowler, Noll and Vo). */
@@ -99,6 +107,45 @@ describe("truth", () => {
     expect(new Set(one.map((r) => r.x_px)).size).toBeGreaterThan(5);
     const first = one.find((r) => r.frame === 0);
     expect(first?.y_um).toBeCloseTo(-0.4 * (first?.y_px as number), 4);
+  });
+
+  it("shakes cells and debris as one", () => {
+    const options: AssayOptions = {
+      ...clean,
+      picture: { ...small, width_px: 320, height_px: 240 },
+      swimmers: { cells: 0 },
+      stuck: { cells: 6 },
+      debris: { pieces: 7, size_um: 0.6, contrast: 0.5 },
+      phone: { shake_px: 2, bump_px: 5, shakes: "stage" },
+    };
+    const assay = planAssay(options);
+    const empty = planAssay({ ...options, stuck: { cells: 0 }, debris: { pieces: 0 } });
+    const kinds = new Set<string>();
+    const { rows } = assay.truth();
+    const [first, later] = [0, 20].map((frame) => ({
+      rows: rows.filter((r) => r.frame === frame),
+      pixels: picture(assay, frame),
+      without: picture(empty, frame),
+    })) as [Look, Look];
+    const moved: number[][] = [];
+    for (const row of first.rows) {
+      const then = later.rows.find((r) => r.cell === row.cell);
+      const roomy = row.x_px > 25 && row.y_px > 25 && row.x_px < 294 && row.y_px < 214;
+      const alone = first.rows.every((r) => r === row || Math.hypot(r.x_px - row.x_px, r.y_px - row.y_px) > 26);
+      if (!then || !roomy || !alone) continue;
+      const drawn = [first, later].map((look, i) => darkCentre(look.pixels, look.without, 320, i === 0 ? row : then));
+      const [dx, dy] = [then.x_px - row.x_px, then.y_px - row.y_px];
+      expect(Math.hypot(dx, dy)).toBeGreaterThan(1);
+      expect(Math.abs((drawn[1]?.x_px as number) - (drawn[0]?.x_px as number) - dx)).toBeLessThan(0.15);
+      expect(Math.abs((drawn[1]?.y_px as number) - (drawn[0]?.y_px as number) - dy)).toBeLessThan(0.15);
+      moved.push([dx, dy]);
+      kinds.add(row.kind);
+    }
+    expect([...kinds].sort()).toEqual(["debris", "stuck"]);
+    for (const [dx, dy] of moved) {
+      expect(dx).toBeCloseTo(moved[0]?.[0] as number, 3);
+      expect(dy).toBeCloseTo(moved[0]?.[1] as number, 3);
+    }
   });
 
   it("counts a cell visible only where it stands out of the noise", () => {
