@@ -30,7 +30,9 @@ export interface Assay {
 }
 
 /**
- * Plans an assay: all motion is simulated here, pictures are made when asked for.
+ * Plans an assay: all motion is simulated here, pictures are made when asked for. The same options give the same bytes
+ * wherever sines, exponentials and logarithms have the same last bit: in Node and Chromium on every machine (V8 brings
+ * its own), not surely in other browsers.
  * @throws InputError when an option is out of bounds.
  */
 export function planAssay(options: AssayOptions = {}): Assay {

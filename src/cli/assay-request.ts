@@ -19,7 +19,7 @@ export interface AssayRequest {
  */
 const qualities: Readonly<Record<Codec, readonly [used: number, best: number, worst: number]>> = {
   h264: [18, 0, 51],
-  hevc: [19, 0, 51],
+  hevc: [16, 0, 51],
   vp9: [24, 0, 63],
   av1: [24, 0, 63],
   mjpeg: [3, 1, 31],
