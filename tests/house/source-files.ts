@@ -1,5 +1,5 @@
 import { execFileSync } from "node:child_process";
-import { existsSync, readFileSync } from "node:fs";
+import { readFileSync, statSync } from "node:fs";
 import { dirname, join, normalize } from "node:path";
 import { fileURLToPath } from "node:url";
 
@@ -12,7 +12,7 @@ export function projectFiles(): string[] {
     .toString()
     .trim()
     .split("\n")
-    .filter((path) => existsSync(join(root, path)));
+    .filter((path) => statSync(join(root, path), { throwIfNoEntry: false })?.isFile());
 }
 
 /** The bytes of a project file as text, a character a byte. */
