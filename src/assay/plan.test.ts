@@ -122,18 +122,19 @@ describe("truth", () => {
     const empty = planAssay({ ...options, stuck: { cells: 0 }, debris: { pieces: 0 } });
     const kinds = new Set<string>();
     const { rows } = assay.truth();
-    const [first, later] = [0, 20].map((frame) => ({
+    const look = (frame: number): Look => ({
       rows: rows.filter((r) => r.frame === frame),
       pixels: picture(assay, frame),
       without: picture(empty, frame),
-    })) as [Look, Look];
+    });
+    const [first, later] = [look(0), look(20)];
     const moved: number[][] = [];
     for (const row of first.rows) {
       const then = later.rows.find((r) => r.cell === row.cell);
       const roomy = row.x_px > 25 && row.y_px > 25 && row.x_px < 294 && row.y_px < 214;
       const alone = first.rows.every((r) => r === row || Math.hypot(r.x_px - row.x_px, r.y_px - row.y_px) > 26);
       if (!then || !roomy || !alone) continue;
-      const drawn = [first, later].map((look, i) => darkCentre(look.pixels, look.without, 320, i === 0 ? row : then));
+      const drawn = [first, later].map((seen, i) => darkCentre(seen.pixels, seen.without, 320, i === 0 ? row : then));
       const [dx, dy] = [then.x_px - row.x_px, then.y_px - row.y_px];
       expect(Math.hypot(dx, dy)).toBeGreaterThan(1);
       expect(Math.abs((drawn[1]?.x_px as number) - (drawn[0]?.x_px as number) - dx)).toBeLessThan(0.15);
