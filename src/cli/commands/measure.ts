@@ -1,9 +1,10 @@
-import { join } from "node:path";
+import { basename, join } from "node:path";
 import type { FootageSettings } from "../../footage/index.ts";
 import { openInNode } from "../../footage/node/index.ts";
 import { defaultMeasureSettings, measureTrial } from "../../pipeline/index.ts";
-import type { MeasuredTrial } from "../../quantities/index.ts";
+import { InputError, type MeasuredTrial } from "../../quantities/index.ts";
 import { resultFiles } from "../../report/index.ts";
+import type { TrialDescription } from "../../trial/index.ts";
 import { readArguments, usageError } from "../arguments.ts";
 import { findingLines } from "../finding-lines.ts";
 import type { Io } from "../io.ts";
@@ -45,16 +46,9 @@ export async function measure(args: readonly string[], json: boolean, io: Io): P
 
   const { trial, recording, warnings } = await readTrialFolder(folder);
   await checkResultFolder(values.out, values.replace);
-  const captureFps = trial.captureFps === null ? {} : { captureFps: trial.captureFps };
-  const footage = await openInNode(recording, { ...captureFps, decoder });
-  let measured: MeasuredTrial;
-  try {
-    const sha256 = await sha256OfFile(recording);
-    const ports = { footage, recording: { name: trial.recording, sha256 }, tool };
-    measured = await measureTrial(trial, ports, defaultMeasureSettings, { progress: (p) => io.progress(p) });
-  } finally {
-    footage.close();
-  }
+  const measured = await measureRecording(trial, recording, decoder, io).catch((error) => {
+    throw withPath(error, trial.recording, recording);
+  });
   const complete = { ...measured, warnings: [...warnings, ...measured.warnings] };
   const files = resultFiles(complete);
   await writeResultFolder(values.out, files, values.replace);
@@ -68,6 +62,32 @@ export async function measure(args: readonly string[], json: boolean, io: Io): P
   io.out(`Result: ${values.out} (open ${join(values.out, "report.html")})`);
 }
 
-function isDecoder(name: string): name is NonNullable<FootageSettings["decoder"]> {
+/** @param recording path of the recording */
+async function measureRecording(
+  trial: TrialDescription,
+  recording: string,
+  decoder: DecoderName,
+  io: Io,
+): Promise<MeasuredTrial> {
+  const captureFps = trial.captureFps === null ? {} : { captureFps: trial.captureFps };
+  const footage = await openInNode(recording, { ...captureFps, decoder });
+  try {
+    const sha256 = await sha256OfFile(recording);
+    const ports = { footage, recording: { name: trial.recording, sha256 }, tool };
+    return await measureTrial(trial, ports, defaultMeasureSettings, { progress: (p) => io.progress(p) });
+  } finally {
+    footage.close();
+  }
+}
+
+/** An error that names the recording as the trial does, with the recording's path instead: it has to be found. */
+function withPath(error: unknown, name: string, path: string): unknown {
+  if (!(error instanceof InputError) || (error.where !== name && error.where !== basename(name))) return error;
+  return new InputError(error.code, error.message, path, error.remedy);
+}
+
+type DecoderName = NonNullable<FootageSettings["decoder"]>;
+
+function isDecoder(name: string): name is DecoderName {
   return ["auto", "native", "wasm"].includes(name);
 }
