@@ -65,13 +65,14 @@ export function methodsText(measured: MeasuredTrial): MethodsText {
     "measured time between frames, and an optimal assignment of sightings to predictions by likelihood " +
     `(${jonker.short}).`;
   const judging =
-    "A cell was called motile when it moved farther than diffusion, localisation and flow explain, at a chance of 1 % that " +
-    "any diffusing cell of the clip is called so. Diffusion and localisation noise were estimated from the covariance of " +
-    `successive displacements (${vestergaard.short}). Speeds are slopes of straight lines fitted to short stretches of ` +
+    "A cell was called motile when, over any stretch of its path, it moved farther than diffusion, localisation and flow " +
+    "explain (F test of the squared displacement, corrected for the number of stretches and cells), at a chance of " +
+    "1\u00a0% that any diffusing cell of the clip is called so. Diffusion and localisation noise were estimated from the " +
+    `covariance of successive displacements (${vestergaard.short}). Speeds are slopes of straight lines fitted to short stretches of ` +
     `the path, corrected for what noise adds to their length (${rice.short}), in the image plane.${flowText(measured)}`;
   const counting =
-    "The mean speed is over motile cells followed for at least 0.5 s, each cell once, with a 95 % interval from " +
-    `Student's t distribution over cells (${student.short}). The motile share has a Wilson 95 % interval ` +
+    "The mean speed is over motile cells followed for at least 0.5 s, each cell once, with a 95\u00a0% interval from " +
+    `Student's t distribution over cells (${student.short})${ofScale(measured)}. The motile share has a Wilson 95\u00a0% interval ` +
     `(${wilson.short}).`;
   return {
     paragraphs: [`${recordingText(measured)} ${finding}`, `${following} ${judging}`, counting],
@@ -79,8 +80,13 @@ export function methodsText(measured: MeasuredTrial): MethodsText {
   };
 }
 
+function ofScale({ scale }: MeasuredTrial): string {
+  if (!scale || scale.uncertainty_um_per_px === 0) return "";
+  return ", to which the uncertainty of the scale was added in squares";
+}
+
 function flowText({ drift }: MeasuredTrial): string {
-  if (!drift) return "";
+  if (!drift) return " No common flow of the fluid was subtracted.";
   const from = drift.from === "diffusing cells" ? "cells that only diffused" : "swimmers that turned, by regression";
   return ` The common flow of the fluid was measured from ${from}, and subtracted.`;
 }

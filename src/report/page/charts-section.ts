@@ -17,10 +17,10 @@ export function chartsSection(measured: MeasuredTrial): Markup {
   }));
   return markup`<section><h2>Evidence</h2>${
     points.length > 0 &&
-    markup`<figure>${speedChart({ speeds: points.map((point) => point.speed), ...centre })}<figcaption>Speed of every cell that counts, one dot a cell. Above them the mean; the band is its 95 % interval.</figcaption></figure>`
+    markup`<figure>${speedChart({ speeds: points.map((point) => point.speed), ...centre })}<figcaption>Speed of every cell that counts, one dot a cell. Above them the mean; the band is its 95\u00a0% interval.</figcaption></figure>`
   }${pathsFigure(measured)}${
     points.length > 1 &&
-    markup`<figure>${durationChart({ points, ...centre })}<figcaption>Speed against the time a cell was followed, with ± one standard error. Dotted line and band: the mean and its 95 % interval. A trend would mean that cells which stay in view are not like those that leave it.</figcaption></figure>`
+    markup`<figure>${durationChart({ points, ...centre })}<figcaption>Speed against the time a cell was followed, with ± one standard error. Dotted line and band: the mean and its 95\u00a0% interval. A trend would mean that cells which stay in view are not like those that leave it.</figcaption></figure>`
   }</section>`;
 }
 

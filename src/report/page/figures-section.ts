@@ -14,7 +14,7 @@ interface Row {
 export function figuresSection(measured: MeasuredTrial): Markup {
   const rows = [...speedRows(measured), ...driftRows(measured)];
   if (rows.length === 0) return markup``;
-  return markup`<section><h2>Figures</h2><div class="scroll" tabindex="0" role="region" aria-label="Figures"><table><thead><tr><th scope="col">Figure</th><th scope="col" class="number">Value</th><th scope="col" class="number">95 % interval</th><th scope="col">From</th></tr></thead><tbody>${rows.map(
+  return markup`<section><h2>Figures</h2><div class="scroll" tabindex="0" role="region" aria-label="Figures"><table><thead><tr><th scope="col">Figure</th><th scope="col" class="number">Value</th><th scope="col" class="number">95\u00a0% interval</th><th scope="col">From</th></tr></thead><tbody>${rows.map(
     (row) =>
       markup`<tr><th scope="row">${row.name}</th><td class="number figure">${row.figure}</td><td class="number">${row.interval}</td><td>${row.behind}</td></tr>`,
   )}</tbody></table></div><p class="note">Speeds are in the image plane. The intervals hold for the cells of this one trial; to compare strains, compare independent cultures.</p></section>`;

@@ -41,6 +41,7 @@ thead th { padding-top: 0; border-bottom-color: var(--quiet); color: var(--quiet
 tbody th { font-weight: 500; }
 .number { text-align: right; white-space: nowrap; }
 .figure { font-weight: 650; }
+.measure { width: 32%; }
 figure { margin: 0 0 34px; break-inside: avoid; }
 figcaption { margin: 8px 0 0; max-width: 75ch; font-size: 14px; text-wrap: pretty; }
 .frame { overflow: hidden; border-radius: 4px; }

@@ -1,17 +1,42 @@
 import type { MeasuredTrial, QualityCheck } from "../../quantities/index.ts";
 import { countCells } from "../cell-counts.ts";
 import { type Markup, markup } from "../markup.ts";
-import { withUnit } from "./figures-section.ts";
-import { asWords } from "./words.ts";
+import { readableAlone } from "../numbers.ts";
+import { asWords, share } from "./words.ts";
 
-/** What was checked of the footage: figure, verdict as shape and word, and what to do when filming again. */
+/** What was checked of the footage: verdict as shape and word, what to do when filming again, and the figure behind it. */
 export function qualitySection({ quality }: MeasuredTrial): Markup {
   if (quality.length === 0) return markup``;
-  return markup`<section><h2>Footage</h2><div class="scroll" tabindex="0" role="region" aria-label="Footage checks"><table><thead><tr><th scope="col">Check</th><th scope="col" class="number">Figure</th><th scope="col">Verdict</th><th scope="col">What it means</th></tr></thead><tbody>${quality.map(
+  return markup`<section><h2>Footage</h2><div class="scroll" tabindex="0" role="region" aria-label="Footage checks"><table><thead><tr><th scope="col">Check</th><th scope="col">Verdict</th><th scope="col">What it means</th><th scope="col">Figure</th></tr></thead><tbody>${quality.map(
     (check) =>
-      markup`<tr><th scope="row">${asWords(check.check)}</th><td class="number">${withUnit(check.figure, check.unit)}</td><td>${mark(check.verdict)}</td><td>${check.advice}</td></tr>`,
+      markup`<tr><th scope="row">${asWords(check.check)}</th><td>${mark(check.verdict)}</td><td>${check.advice}</td><td class="measure">${figureOf(check)}</td></tr>`,
   )}</tbody></table></div></section>`;
 }
+
+/** The checks in one line, those that limit the figures by name: `crowding poor, exposure fair, the rest good`. */
+export function checksInWords(quality: readonly QualityCheck[]): string {
+  const named = (["poor", "fair", "unknown"] as const).flatMap((verdict) =>
+    quality
+      .filter((check) => check.verdict === verdict)
+      .map((check) => `${asWords(check.check).toLowerCase()} ${verdict}`),
+  );
+  if (named.length === 0) return `all ${quality.length} checks good`;
+  return [...named, ...(named.length < quality.length ? ["the rest good"] : [])].join(", ");
+}
+
+/** Three digits and what they count; a share as a percentage. */
+function figureOf({ figure, unit }: QualityCheck): Markup {
+  if (figure === null) return markup`<span class="quiet">not known</span>`;
+  const part = /^share (of .*)$/.exec(unit)?.[1];
+  const number = part
+    ? figure > 0 && figure < 0.0005
+      ? "below 0.1\u00a0%"
+      : share(figure)
+    : readableAlone(three(figure));
+  return markup`${number} <span class="quiet">${part ?? unit}</span>`;
+}
+
+const three = (figure: number) => Number(figure.toPrecision(3));
 
 const shapes: Readonly<Record<QualityCheck["verdict"], Markup>> = {
   good: markup`<circle class="full" cx="6" cy="6" r="4.6"/>`,

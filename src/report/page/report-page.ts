@@ -4,7 +4,7 @@ import { chartsSection } from "./charts-section.ts";
 import { figuresSection } from "./figures-section.ts";
 import { pageStyle } from "./page-style.ts";
 import { methodsSection, provenanceSection } from "./provenance-section.ts";
-import { qualitySection, setAsideSection } from "./quality-section.ts";
+import { checksInWords, qualitySection, setAsideSection } from "./quality-section.ts";
 import { verdict } from "./verdict.ts";
 
 /** The page may show what is inside it and nothing else: no script, no request, no frame, no form. */
@@ -27,7 +27,7 @@ export function reportPage(measured: MeasuredTrial): string {
 <style>${new Safe(pageStyle)}</style>
 </head>
 <body>
-<header><h1><bdi>${heading}</bdi></h1>${about(measured)}<p class="verdict">${verdict(measured)}</p></header>
+<header><h1><bdi>${heading}</bdi></h1>${about(measured)}<p class="verdict">${verdict(measured)}</p>${footage(measured)}</header>
 <main>
 ${warningsSection(measured)}
 ${figuresSection(measured)}
@@ -51,6 +51,10 @@ function about({ strain, culture, condition, source, trial }: MeasuredTrial): Ma
     trial && (["recording", source.recording] as const),
   ].filter((fact) => fact !== null && fact !== "" && fact !== undefined);
   return markup`<p class="of">${facts.map((fact) => fact && markup`<span>${fact[0]} <bdi>${fact[1]}</bdi></span>`)}</p>`;
+}
+
+function footage({ quality }: MeasuredTrial): Markup {
+  return quality.length === 0 ? markup`` : markup`<p class="quiet">Footage: ${checksInWords(quality)}.</p>`;
 }
 
 function warningsSection({ warnings }: MeasuredTrial): Markup {

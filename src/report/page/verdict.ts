@@ -15,7 +15,7 @@ export function verdict(measured: MeasuredTrial): Markup {
   }
   if (counts.motile === 0) {
     const interval = speed?.ci95_motile_fraction;
-    const bound = interval ? ` The motile share is ${shareRange(interval)} (95 % interval).` : "";
+    const bound = interval ? ` The motile share is ${shareRange(interval)} (95\u00a0% interval).` : "";
     const which =
       judged === 1
         ? "the one cell that could be judged did not move"
@@ -32,5 +32,5 @@ export function verdict(measured: MeasuredTrial): Markup {
   if (mean.n < 2 || half <= 0) {
     return markup`${swimmers} swam at <b>${readableAlone(mean.value)} ${unit}</b>; an interval needs more cells.`;
   }
-  return markup`${swimmers} swam at <b>${readable(mean.value, half)} ${unit}</b> on average (95 % interval ${range(mean.ci95)} ${unit}).`;
+  return markup`${swimmers} swam at <b>${readable(mean.value, half)} ${unit}</b> on average (95\u00a0% interval ${range(mean.ci95)} ${unit}).`;
 }
