@@ -92,7 +92,7 @@ describe("truth", () => {
         const alone = here.every((r) => r === row || Math.hypot(r.x_px - row.x_px, r.y_px - row.y_px) > 30);
         if (!roomy || !alone) continue;
         const centre = darkCentre(pixels, without, 160, row);
-        expect(Math.hypot(centre.x_px - row.x_px, centre.y_px - row.y_px)).toBeLessThan(0.1);
+        expect(Math.hypot(centre.x_px - row.x_px, centre.y_px - row.y_px)).toBeLessThan(0.05);
         compared++;
       }
     }

@@ -33,6 +33,7 @@ export function readAssayRequest(args: readonly string[]): AssayRequest {
     out: { type: "string" },
     preset: { type: "string", default: "plain" },
     seed: { type: "string" },
+    seconds: { type: "string" },
     set: { type: "string", multiple: true, default: [] },
     codec: { type: "string", default: "h264" },
     container: { type: "string" },
@@ -50,7 +51,8 @@ export function readAssayRequest(args: readonly string[]): AssayRequest {
   if (!values.list && !values.out) throw usageError("assay", "No folder to write to was given (--out FOLDER).");
   const preset = presetNamed(values.preset);
   const seed = values.seed === undefined ? {} : { seed: wholeNumber("--seed", values.seed, 0, 0xffffffff) };
-  const options = withSettings({ ...preset.options, ...seed }, values.set);
+  const length = values.seconds === undefined ? [] : [`time.seconds=${values.seconds}`];
+  const options = withSettings({ ...preset.options, ...seed }, [...length, ...values.set]);
   const { trial, strain, culture, condition } = values;
   const given = Object.entries({ trial, strain, culture, condition }).filter(([, name]) => name !== undefined);
   return {

@@ -8,7 +8,7 @@ import { InputError } from "../../quantities/index.ts";
 import { readTrialFolder } from "../trial-folder.ts";
 import { assay } from "./assay.ts";
 
-const quick = ["--set", "picture.width_px=128", "--set", "picture.height_px=96", "--set", "time.seconds=0.5"];
+const quick = ["--set", "picture.width_px=128", "--set", "picture.height_px=96", "--seconds", "0.5"];
 
 let parent = "";
 let lines: string[] = [];
@@ -85,6 +85,14 @@ describe("lodewake assay", () => {
     expect(Math.abs(Number(row.y_um) + um * Number(row.y_px))).toBeLessThan(0.011);
   });
 
+  it("makes the same bytes of every file when asked twice", async () => {
+    const folders = ["one", "two"].map((name) => join(parent, name));
+    for (const out of folders) await run("--out", out, "--preset", "demo", ...quick);
+    const [one, two] = folders.map((out) => readdirSync(out).map((name) => [name, readFileSync(join(out, name))]));
+    expect(one?.length).toBe(4);
+    expect(two).toEqual(one);
+  });
+
   it("says how slow motion was captured, in the trial and in the recording", async () => {
     const out = join(parent, "slow");
     await run("--out", out, "--preset", "slow-motion", ...quick);
@@ -135,6 +143,8 @@ describe("lodewake assay", () => {
     ["stray word", ["more"]],
     ["seed that is no number", ["--seed", "x"]],
     ["seed that is no whole number", ["--seed", "1.5"]],
+    ["length that is no number", ["--seconds", "long"]],
+    ["length of nothing", ["--seconds", "0"]],
     ["unknown setting", ["--set", "swimmers.sped=3"]],
     ["setting without a value", ["--set", "swimmers.cells"]],
     ["setting of the wrong kind", ["--set", "swimmers.cells=many"]],

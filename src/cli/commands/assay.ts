@@ -7,7 +7,7 @@ import { encodeRecording } from "../encode/index.ts";
 import type { Io } from "../io.ts";
 import { checkFolder, type FolderKind, writeFolder } from "../whole-folder.ts";
 
-export const help = `lodewake assay --out FOLDER [--preset NAME] [--seed N] [--set SECTION.NAME=VALUE]... [options]
+export const help = `lodewake assay --out FOLDER [--preset NAME] [--seed N] [--seconds S] [--set SECTION.NAME=VALUE]... [options]
 
 Makes a synthetic trial whose truth is known: the recording and trial.json in the folder FOLDER, and beside them
 truth.csv (every cell in every frame) and truth.json (each cell's speed and moment, the trial's own figures, all
@@ -16,8 +16,9 @@ settings). The same request makes the same bytes.
   --out FOLDER        the folder to write
   --preset NAME       what to film (plain when left out); --list shows all
   --seed N            another sample of the same kind: 0 to 4294967295
+  --seconds S         how long to film
   --set S.N=VALUE     any one setting over the preset's, as often as wanted; truth.json shows them all:
-                      --set swimmers.speed_um_s=60 --set time.seconds=5 --set "sample.flow_um_s=[4,0]"
+                      --set swimmers.speed_um_s=60 --set time.fps=60 --set "sample.flow_um_s=[4,0]"
   --codec NAME        h264 (when left out), mjpeg, or with the optional codec library hevc, vp9 or av1
   --container NAME    mp4 or mov for h264 and hevc, webm or mp4 for vp9 and av1, avi for mjpeg
   --quality N         constant rate factor, Motion JPEG: quantiser; smaller is better
