@@ -89,7 +89,7 @@ const traceDuration_s = 1.2;
 
 /**
  * Paths that aren't an encoder's traces of others: where a cell has passed, compressed footage keeps a shade of it for some
- * frames, faint, out of nowhere and gone again without leaving the view. Returns the indices of the others.
+ * frames: faint, not there from the start, and gone again without leaving the view. Returns the indices of the others.
  */
 function withoutTraces(paths: Paths, sightings: Sightings): number[] {
   if (sightings.count === 0) return [];
