@@ -7,6 +7,7 @@ export function findingLines({ speed, drift, scale, paths, source }: MeasuredTri
   if (!speed) return lines;
   const mean = scale ? speed.mean_um_s : speed.mean_px_s;
   if (mean) lines.push(`Speed ${withInterval(mean)} ${unit}, ${speed.n_cells} motile cells.`);
+  else if (speed.n_judged === 0) lines.push("No motile cell: none was followed long enough to tell.");
   else if (speed.n_cells === 0) lines.push("No motile cell.");
   else lines.push(`${speed.n_cells} motile cell: no mean.`);
   if (speed.motile_fraction !== null && speed.ci95_motile_fraction) {

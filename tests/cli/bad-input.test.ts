@@ -128,6 +128,7 @@ describe("a request that can't be understood", () => {
     [[], /No command/],
     [["measur"], /no command "measur"/],
     [["measure"], /No trial folder/],
+    [["measure", "", "--out", "c"], /No trial folder/],
     [["measure", "a", "b", "--out", "c"], /More than one/],
     [["measure", "a"], /--out/],
     [["measure", "a", "--out", "b", "--fast"], /--fast/],

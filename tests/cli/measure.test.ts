@@ -99,8 +99,9 @@ describe("lodewake measure", () => {
   });
 
   it("measures a still scene", () => {
-    const { code, err } = lodewake("measure", still, "--out", at("r4"));
+    const { code, out, err } = lodewake("measure", still, "--out", at("r4"));
     expect(code).toBe(0);
+    expect(out).toContain("No motile cell: none was followed long enough to tell.");
     expect(err).toMatch(/no scale/i);
     expect(summaryIn(at("r4")).speed.n_cells).toBe(0);
   });

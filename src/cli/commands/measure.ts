@@ -37,7 +37,7 @@ export async function measure(args: readonly string[], json: boolean, io: Io): P
     json: { type: "boolean" },
   });
   const [folder, ...more] = positionals;
-  if (folder === undefined) throw usageError("measure", "No trial folder was given.");
+  if (folder === undefined || folder === "") throw usageError("measure", "No trial folder was given.");
   if (more.length > 0) throw usageError("measure", `More than one trial folder was given: ${positionals.join(", ")}.`);
   if (values.out === undefined || values.out === "")
     throw usageError("measure", "No folder to write to was given (--out RESULT).");
