@@ -1,5 +1,5 @@
 /** Boltzmann constant, J/K: exact by definition of the kelvin (SI, 2019). */
-export const boltzmann_J_per_K = 1.380649e-23;
+const boltzmann_J_per_K = 1.380649e-23;
 
 /** Thermal energy k_B·T at a temperature in degrees Celsius, joule. */
 export function thermalEnergy_J(temperature_C: number): number {

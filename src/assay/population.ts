@@ -45,7 +45,7 @@ export function boxOf(settings: AssaySettings): Box {
 }
 
 /** Area of the lit view, µm². */
-export function viewArea_um2(settings: AssaySettings): number {
+function viewArea_um2(settings: AssaySettings): number {
   const { width_px, height_px, um_per_px } = settings.picture;
   const eyepiece = settings.light.eyepiece;
   const whole = width_px * height_px;
