@@ -9,8 +9,8 @@ export const chartStyle = `
 .lw-chart .lw-label { fill: var(--chart-quiet, #56616d); }
 .lw-axis, .lw-tick { stroke: var(--chart-quiet, #56616d); stroke-width: 1; }
 .lw-grid { stroke: var(--chart-line, #dfe4e8); stroke-width: 1; }
-.lw-dot { fill: var(--chart-cell, #2b6cab); fill-opacity: .38; }
-.lw-bar { stroke: var(--chart-cell, #2b6cab); stroke-opacity: .3; stroke-width: 1; }
+.lw-dot { fill: var(--chart-cell, #2b6cab); fill-opacity: var(--chart-dot-opacity, .42); }
+.lw-bar { stroke: var(--chart-cell, #2b6cab); stroke-opacity: .45; stroke-width: 1; }
 .lw-mean { fill: var(--chart-mean, #b3430a); }
 .lw-interval { stroke: var(--chart-mean, #b3430a); stroke-width: 3; stroke-linecap: round; }
 .lw-mean-line { stroke: var(--chart-mean, #b3430a); stroke-width: 1.5; stroke-dasharray: 1 4; stroke-linecap: round; }

@@ -13,7 +13,7 @@ export const pageStyle = `
   :root {
     color-scheme: dark;
     --paper: #12181f; --ink: #e6eaee; --quiet: #a0abb6; --line: #2c3742; --tint: #1a222b;
-    --cell: #8cc4f7; --mean: #ff9b57; --good: #6fcfae; --fair: #e6b95c; --poor: #ff8f96;
+    --cell: #8cc4f7; --mean: #ff9b57; --good: #6fcfae; --fair: #e6b95c; --poor: #ff8f96; --chart-dot-opacity: .6;
   }
 }
 * { box-sizing: border-box; }
@@ -41,7 +41,8 @@ thead th { padding-top: 0; border-bottom-color: var(--quiet); color: var(--quiet
 tbody th { font-weight: 500; }
 .number { text-align: right; white-space: nowrap; }
 .figure { font-weight: 650; }
-.measure { width: 32%; }
+.checks tbody th { white-space: nowrap; }
+.measure { width: 30%; }
 figure { margin: 0 0 34px; break-inside: avoid; }
 figcaption { margin: 8px 0 0; max-width: 75ch; font-size: 14px; text-wrap: pretty; }
 .frame { overflow: hidden; border-radius: 4px; }

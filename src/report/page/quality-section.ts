@@ -7,7 +7,7 @@ import { asWords, share } from "./words.ts";
 /** What was checked of the footage: verdict as shape and word, what to do when filming again, and the figure behind it. */
 export function qualitySection({ quality }: MeasuredTrial): Markup {
   if (quality.length === 0) return markup``;
-  return markup`<section><h2>Footage</h2><div class="scroll" tabindex="0" role="region" aria-label="Footage checks"><table><thead><tr><th scope="col">Check</th><th scope="col">Verdict</th><th scope="col">What it means</th><th scope="col">Figure</th></tr></thead><tbody>${quality.map(
+  return markup`<section><h2>Footage</h2><div class="scroll" tabindex="0" role="region" aria-label="Footage checks"><table class="checks"><thead><tr><th scope="col">Check</th><th scope="col">Verdict</th><th scope="col">What it means</th><th scope="col">Figure</th></tr></thead><tbody>${quality.map(
     (check) =>
       markup`<tr><th scope="row">${asWords(check.check)}</th><td>${mark(check.verdict)}</td><td>${check.advice}</td><td class="measure">${figureOf(check)}</td></tr>`,
   )}</tbody></table></div></section>`;
