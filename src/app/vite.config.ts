@@ -3,11 +3,13 @@ import { resolve } from "node:path";
 import { fileURLToPath } from "node:url";
 import react from "@vitejs/plugin-react";
 import { defineConfig, type Plugin } from "vite";
+import { licencesBesidePage } from "./licences-beside-page.ts";
 import { pagePolicy } from "./policy.ts";
 
 const here = fileURLToPath(new URL(".", import.meta.url));
 const project = resolve(here, "../..");
 const demo = resolve(project, "fixtures/demo-trial");
+const licences = licencesBesidePage(project);
 
 /** Puts the policy into the built page. The development server needs inline scripts and goes without. */
 function policyInPage(): Plugin {
@@ -45,8 +47,8 @@ const moduleSideEffects = (id: string) =>
 export default defineConfig({
   root: here,
   base: "./",
-  plugins: [react(), policyInPage(), demoBesidePage()],
-  worker: { format: "es" },
+  plugins: [react(), policyInPage(), demoBesidePage(), licences.page],
+  worker: { format: "es", plugins: () => [licences.worker()] },
   // Only what lies in the project is served while developing.
   server: { host: "127.0.0.1", fs: { allow: [project] } },
   build: {
