@@ -21,6 +21,15 @@ describe("the house", () => {
     expect(text("package-lock.json")).not.toContain('"resolved"');
   });
 
+  it("speaks of nothing that a reader of the project can't look up: issues by number, folders beside it", () => {
+    const wrong = /\bissues? #?\d|(?<![\w/."'])(?:\.\.\/)+shared\b/i;
+    const readable = files.filter(
+      (path) => /\.(tsx?|mjs|css|html|md|json)$/.test(path) && path !== "package-lock.json",
+    );
+    expect(readable.length).toBeGreaterThan(300);
+    expect(readable.filter((path) => wrong.test(text(path)))).toEqual([]);
+  });
+
   it("keeps clocks, chance, locale, consoles, Node and the page out of the code that measures", () => {
     const pure = /^src\/(quantities|statistics|assay|vision|tracking|analysis|trial|report|pipeline)\//;
     const readers = /^src\/footage\/(?!node\/|browser\/)/;

@@ -148,7 +148,7 @@ function exposure(e: FootageEvidence): QualityCheck {
 function exposureDrift(e: FootageEvidence): QualityCheck {
   const gains = Array.from(e.gain);
   const figure = gains.length > 0 ? quantile(gains, 0.98) - quantile(gains, 0.02) : null;
-  return check("exposure_drift", figure, "change of brightness", lowerIsBetter(figure, 0.1, 0.3), {
+  return check("exposure_drift", figure, "share of the brightness gained or lost", lowerIsBetter(figure, 0.1, 0.3), {
     good: "Brightness is steady; what change there was has been allowed for.",
     fair: "Brightness changes during the clip; that has been allowed for. Lock the exposure.",
     poor: "Brightness changes much during the clip: lock the exposure.",

@@ -80,9 +80,10 @@ pre { margin: 10px 0 0; padding: 14px 16px; overflow-x: auto; border-radius: 4px
   tr, li, dt, dd, .safety { break-inside: avoid; }
   thead { display: table-header-group; }
   .paths-figure { width: 82%; }
+  pre { columns: 2; overflow: visible; font-size: 7pt; }
   * { print-color-adjust: exact; -webkit-print-color-adjust: exact; }
   .scroll { overflow: visible; }
-  summary { list-style: none; }
+  summary { list-style: none; break-after: avoid; }
   details::details-content { content-visibility: visible; block-size: auto; }
 }
 ${chartStyle}`;
