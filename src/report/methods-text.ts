@@ -21,6 +21,10 @@ const bernstein: Reference = {
   short: "Bernstein and Jarvis 2002",
   full: "Bernstein GM, Jarvis M. Shapes and shears, stars and smears: optimal measurements for weak lensing. Astron. J. 123, 583–618 (2002).",
 };
+const huber: Reference = {
+  short: "Huber 1964",
+  full: "Huber PJ. Robust estimation of a location parameter. Ann. Math. Stat. 35, 73–101 (1964).",
+};
 const jonker: Reference = {
   short: "Jonker and Volgenant 1987",
   full: "Jonker R, Volgenant A. A shortest augmenting path algorithm for dense and sparse linear assignment problems. Computing 38, 325–340 (1987).",
@@ -28,6 +32,10 @@ const jonker: Reference = {
 const kalman: Reference = {
   short: "Kalman 1960",
   full: "Kalman RE. A new approach to linear filtering and prediction problems. J. Basic Eng. 82, 35–45 (1960).",
+};
+const lucas: Reference = {
+  short: "Lucas and Kanade 1981",
+  full: "Lucas BD, Kanade T. An iterative image registration technique with an application to stereo vision. Proc. 7th Int. Joint Conf. Artif. Intell., 674–679 (1981).",
 };
 const marquardt: Reference = {
   short: "Marquardt 1963",
@@ -50,6 +58,9 @@ const wilson: Reference = {
   full: "Wilson EB. Probable inference, the law of succession, and statistical inference. J. Am. Stat. Assoc. 22, 209–212 (1927).",
 };
 
+/** In the order of a list of references. */
+const references = [adler, bernstein, huber, jonker, kalman, lucas, marquardt, rice, student, vestergaard, wilson];
+
 /** A methods section ready to paste, for what was done to this trial. */
 export function methodsText(measured: MeasuredTrial): MethodsText {
   const finding =
@@ -59,11 +70,11 @@ export function methodsText(measured: MeasuredTrial): MethodsText {
     `pass anywhere in a frame, from the expected Euler characteristic of a Gaussian random field (${adler.short}), and ` +
     "raised where the polarity that cells don't have showed more. Cells were located with sub-pixel accuracy by " +
     `adaptive Gaussian-weighted moments (${bernstein.short}), touching ones by a joint least-squares fit ` +
-    `(${marquardt.short}).`;
+    `(${marquardt.short}).${shakeText(measured)}`;
   const following =
     `Sightings were joined into paths with a Kalman filter (${kalman.short}) that predicts each position over the ` +
     "measured time between frames, and an optimal assignment of sightings to predictions by likelihood " +
-    `(${jonker.short}).`;
+    `(${jonker.short}). Pieces of path that fit in place and velocity were joined across gaps.`;
   const judging =
     "A cell was called motile when, over any stretch of its path, it moved farther than diffusion, localisation and flow " +
     "explain (F test of the squared displacement, corrected for the number of stretches and cells), at a chance of " +
@@ -74,10 +85,15 @@ export function methodsText(measured: MeasuredTrial): MethodsText {
     "The mean speed is over motile cells followed for at least 0.5 s, each cell once, with a 95\u00a0% interval from " +
     `Student's t distribution over cells (${student.short})${ofScale(measured)}. The motile share has a Wilson 95\u00a0% interval ` +
     `(${wilson.short}).`;
-  return {
-    paragraphs: [`${recordingText(measured)} ${finding}`, `${following} ${judging}`, counting],
-    references: [adler, bernstein, jonker, kalman, marquardt, rice, student, vestergaard, wilson],
-  };
+  const paragraphs = [`${recordingText(measured)} ${finding}`, `${following} ${judging}`, counting];
+  const cited = (reference: Reference) => paragraphs.some((text) => text.includes(reference.short));
+  return { paragraphs, references: references.filter(cited) };
+}
+
+function shakeText({ shift }: MeasuredTrial): string {
+  const moved = shift.x_px.some((x) => x !== 0) || shift.y_px.some((y) => y !== 0);
+  if (!moved) return " No camera shake was subtracted.";
+  return ` Camera shake was measured against texture that stays in place (${lucas.short}), and subtracted.`;
 }
 
 function ofScale({ scale }: MeasuredTrial): string {
@@ -87,7 +103,10 @@ function ofScale({ scale }: MeasuredTrial): string {
 
 function flowText({ drift }: MeasuredTrial): string {
   if (!drift) return " No common flow of the fluid was subtracted.";
-  const from = drift.from === "diffusing cells" ? "cells that only diffused" : "swimmers that turned, by regression";
+  const from =
+    drift.from === "diffusing cells"
+      ? "cells that only diffused"
+      : `swimmers that turned, by robust regression (${huber.short})`;
   return ` The common flow of the fluid was measured from ${from}, and subtracted.`;
 }
 
